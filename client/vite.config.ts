@@ -1,0 +1,25 @@
+import react from '@vitejs/plugin-react';
+import { defaultClientConditions } from 'vite';
+import { defineConfig } from 'vitest/config';
+
+const api = process.env.API_URL ?? 'http://127.0.0.1:4600';
+
+export default defineConfig({
+  plugins: [react()],
+  resolve: { conditions: ['@kerfyard/source', ...defaultClientConditions] },
+  ssr: { resolve: { conditions: ['@kerfyard/source'] } },
+  server: {
+    host: '127.0.0.1',
+    port: Number(process.env.CLIENT_PORT ?? 4605),
+    strictPort: true,
+    proxy: { '/api': api, '/socket.io': { target: api, ws: true } },
+  },
+  build: { target: 'es2022', sourcemap: true, manifest: true },
+  test: {
+    name: 'client',
+    environment: 'happy-dom',
+    setupFiles: ['./src/test/setup.ts'],
+    include: ['src/**/*.test.{ts,tsx}'],
+    css: false,
+  },
+});
