@@ -1,0 +1,2 @@
+export * from './cents.ts';
+export * from './fees.ts';

@@ -1,0 +1,4 @@
+export * from './roles.ts';
+export * from './permissions.ts';
+export * from './people.schema.ts';
+export * from './people.views.ts';
