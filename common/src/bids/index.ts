@@ -1,0 +1,3 @@
+export * from './bid.schema.ts';
+export * from './bid.rules.ts';
+export * from './bid.views.ts';

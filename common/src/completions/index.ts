@@ -1,0 +1,3 @@
+export * from './completion.schema.ts';
+export * from './completion.state.ts';
+export * from './completion.views.ts';

@@ -1,0 +1,83 @@
+import { z } from 'zod';
+import { textSchema } from '../api/index.ts';
+
+/** A finite number within a range, with a message that says the range and the unit. */
+function measure(unit: string, min: number, max: number) {
+  return z
+    .number(`A number of ${unit}`)
+    .min(min, `At least ${min} ${unit}`)
+    .max(max, `At most ${max} ${unit}`);
+}
+
+const lengthFt = measure('ft', 0.1, 100_000);
+const widthFt = measure('ft', 0.1, 10_000);
+const thicknessIn = measure('in', 0.5, 240);
+const depthIn = measure('in', 0.1, 240);
+const diameterIn = measure('in', 0.25, 96);
+const count = z
+  .number('A whole number')
+  .int('A whole number')
+  .min(1, 'At least 1')
+  .max(10_000, 'At most 10,000');
+const bladeDiameterIn = measure('in', 4, 84).optional();
+const passThroughIn = measure('in', 0, 12).optional();
+
+/** How the piece is taken away: its greatest weight decides the cross cuts. */
+export const removalSchema = z.strictObject({
+  densityPcf: measure('pcf', 20, 600).default(150),
+  allowancePct: measure('%', 0, 100).optional(),
+  maxPieceLb: measure('lb', 10, 200_000),
+  maxSideFt: measure('ft', 0.5, 1000).optional(),
+  maxShortSideFt: measure('ft', 0.5, 1000).optional(),
+});
+
+const line = z.strictObject({ kind: z.literal('line'), lengthFt, depthIn, count });
+
+const trench = z.strictObject({
+  kind: z.literal('trench'),
+  lengthFt,
+  widthFt,
+  thicknessIn,
+  sideCuts: z.union([z.literal(1), z.literal(2)]).default(2),
+  endCuts: z.union([z.literal(0), z.literal(1), z.literal(2)]).default(2),
+  bladeDiameterIn,
+  passThroughIn,
+  count,
+  removal: removalSchema.optional(),
+});
+
+const opening = z.strictObject({
+  kind: z.literal('opening'),
+  lengthFt,
+  widthFt,
+  thicknessIn,
+  uncutSides: z
+    .array(z.enum(['top', 'bottom', 'left', 'right']))
+    .max(3, 'At least one side is cut')
+    .optional(),
+  corners: z.enum(['overcut', 'cored', 'square']),
+  bladeDiameterIn,
+  passThroughIn,
+  count,
+  removal: removalSchema.optional(),
+});
+
+const core = z.strictObject({ kind: z.literal('core'), diameterIn, depthIn, count });
+
+/** One cut as typed, in the engine's own shape, so what is priced and what is stored are the same thing. */
+export const cutSchema = z.discriminatedUnion('kind', [line, trench, opening, core]);
+export type CutInput = z.input<typeof cutSchema>;
+export type CutData = z.output<typeof cutSchema>;
+export type CutKind = CutData['kind'];
+export const cutKinds = ['line', 'trench', 'opening', 'core'] as const satisfies readonly CutKind[];
+
+/** A line of the cut list: a stable id that bids, subcontracts and as-cuts cite, and the mark people say aloud. */
+export const cutLineSchema = z.strictObject({
+  id: z.uuid(),
+  mark: textSchema(16),
+  note: textSchema(300, 0).default(''),
+  cut: cutSchema,
+});
+export type CutLine = z.output<typeof cutLineSchema>;
+
+export const MAX_CUT_LINES = 500;

@@ -1,0 +1,5 @@
+export * from './cut.schema.ts';
+export * from './responsibilities.ts';
+export * from './scope.schema.ts';
+export * from './scope.state.ts';
+export * from './scope.views.ts';
