@@ -43,6 +43,15 @@ export async function run(command, args, options = {}) {
   return { code, output };
 }
 
+/** Runs a command that talks to the person itself; resolves to its exit code. */
+export function runAttached(command, args, { cwd = root, env = process.env } = {}) {
+  const child = spawn(command, args, { cwd, env, stdio: 'inherit' });
+  return new Promise((resolve, reject) => {
+    child.once('error', reject);
+    child.once('exit', (code) => resolve(code ?? 1));
+  });
+}
+
 function openLog(logFile) {
   mkdirSync(dirname(logFile), { recursive: true });
   return createWriteStream(logFile, { flags: 'a' });

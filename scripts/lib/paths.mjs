@@ -31,6 +31,7 @@ export function placesIn(home) {
     files: join(home, 'files'),
     keys: join(home, 'keys'),
     logs: join(home, 'logs'),
+    previousLogs: join(home, 'logs.previous'),
     run: join(home, 'run'),
     stripe: join(home, 'stripe'),
     mail: join(home, 'mail'),

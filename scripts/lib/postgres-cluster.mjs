@@ -14,6 +14,8 @@ const throwawaySettings =
   '-c fsync=off -c synchronous_commit=off -c full_page_writes=off -c max_connections=200';
 const startTries = 5;
 
+const clusterDirectory = (home) => join(home, 'cluster');
+
 /** Whether a cluster was made here to its end. */
 export const isClusterComplete = (home) => existsSync(join(home, completeMarker));
 
@@ -27,19 +29,13 @@ export const isClusterComplete = (home) => existsSync(join(home, completeMarker)
  * Returns `{ port, urls: { super, owner, app }, stop }`.
  */
 export async function openCluster({ home, port, secrets, throwaway = false }) {
-  const cluster = {
-    home,
-    directory: join(home, 'cluster'),
-    logFile: join(home, 'postgres.log'),
-    port,
-    throwaway,
-  };
   mkdirSync(home, { recursive: true });
   chmodSync(home, 0o711); // user postgres has to walk through
-  const { folder, major } = await postgresPrograms(cluster.directory);
-  Object.assign(cluster, { folder, major });
+  await endServerLeftRunning(home);
+  const directory = clusterDirectory(home);
+  const { folder, major } = await postgresPrograms(directory);
+  const cluster = { home, directory, folder, major, logFile: join(home, 'postgres.log'), port, throwaway };
 
-  await endServerLeftRunning(cluster);
   const keeper = startKeeper(cluster);
   try {
     if (!isClusterComplete(home)) await makeCluster(cluster, secrets.superPassword);
@@ -122,13 +118,17 @@ async function startServer(cluster) {
  * Deals with the postmaster.pid of an earlier run: stops a server that still runs on this cluster, and removes the file
  * when its pid now belongs to some other program, which PostgreSQL itself would take for a running server.
  */
-async function endServerLeftRunning(cluster) {
-  const pidFile = join(cluster.directory, 'postmaster.pid');
+export async function endServerLeftRunning(home) {
+  const directory = clusterDirectory(home);
+  const pidFile = join(directory, 'postmaster.pid');
   if (!existsSync(pidFile)) return;
   const pid = Number(readFileSync(pidFile, 'utf8').split('\n')[0]);
-  if (isServerOf(pid, cluster.directory)) {
-    const mode = isClusterComplete(cluster.home) ? 'fast' : 'immediate';
-    await control(cluster, ['stop', '-w', '-t', '30', '-s', '-m', mode], { allowFailure: true });
+  if (isServerOf(pid, directory)) {
+    const { folder } = await postgresPrograms(directory);
+    const mode = isClusterComplete(home) ? 'fast' : 'immediate';
+    await control({ folder, directory }, ['stop', '-w', '-t', '30', '-s', '-m', mode], {
+      allowFailure: true,
+    });
   }
   rmSync(pidFile, { force: true });
 }

@@ -1,0 +1,30 @@
+import { spawn } from 'node:child_process';
+import { createInterface } from 'node:readline';
+import { inRoot, root } from './paths.mjs';
+
+// The shell ends its whole process group as soon as its input closes: when we ask for it, and when we are killed.
+const untilInputCloses = '"$@" </dev/null & cat >/dev/null; trap "" TERM; kill -TERM 0; wait';
+
+/**
+ * Starts a watching tool from node_modules/.bin with its lines shown under its name. Returns the function that stops it.
+ */
+export function spawnTool({ name, args, env, cwd = root }) {
+  const command = [inRoot('node_modules/.bin', name), ...args];
+  const shell = spawn('/bin/sh', ['-c', untilInputCloses, name, ...command], {
+    cwd,
+    env,
+    detached: true,
+    stdio: ['pipe', 'pipe', 'pipe'],
+  });
+  const ended = new Promise((resolve) => shell.once('close', resolve));
+  for (const stream of [shell.stdout, shell.stderr]) {
+    createInterface({ input: stream }).on('line', (line) => {
+      // The first address a person sees is the app's, so a tool does not announce its own.
+      if (line.trim() && !line.includes('://')) console.log(`[${name}] ${line}`);
+    });
+  }
+  return () => {
+    shell.stdin.end();
+    return ended;
+  };
+}
