@@ -5,7 +5,7 @@ import { clientDist, programLog, programs, runProgram, startStandIns } from './a
 import { buildStale } from './build.mjs';
 import { Failure } from './failure.mjs';
 import { checkNodeVersion, installStale } from './install.mjs';
-import { dataDirectory, placesIn } from './paths.mjs';
+import { dataDirectory, makeHome, placesIn } from './paths.mjs';
 import { endLeftovers } from './pid-files.mjs';
 import { choosePort } from './ports.mjs';
 import { endServerLeftRunning, isClusterComplete, openCluster } from './postgres-cluster.mjs';
@@ -31,7 +31,7 @@ const seededMarker = (places) => join(places.clusterHome, 'seeded');
 /** Takes the data folder for this run; a Failure that names the run which has it. */
 async function lockHome(places, shutdown) {
   try {
-    mkdirSync(places.home, { recursive: true });
+    makeHome(places.home);
   } catch (error) {
     throw new Failure(
       `${places.home} cannot be made (${error.code}). Set KERFYARD_DATA_DIR to a folder of yours.`,

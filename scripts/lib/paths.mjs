@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto';
+import { chmodSync, mkdirSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
@@ -10,6 +11,8 @@ export const isRoot = process.getuid?.() === 0;
 /** Absolute path of something inside the checkout. */
 export const inRoot = (...parts) => join(root, ...parts);
 
+const rootHome = '/var/lib/kerfyard';
+
 /**
  * The folder that holds everything this checkout keeps between runs: database cluster, uploaded files, keys, state of
  * the stand-ins, logs, pid files. It is one folder so that a database never outlives the key its sealed bids need.
@@ -20,7 +23,15 @@ export const inRoot = (...parts) => join(root, ...parts);
 export function dataDirectory() {
   if (process.env.KERFYARD_DATA_DIR) return process.env.KERFYARD_DATA_DIR;
   if (!isRoot) return inRoot('.data');
-  return join('/var/lib/kerfyard', createHash('sha256').update(root).digest('hex').slice(0, 12));
+  return join(rootHome, createHash('sha256').update(root).digest('hex').slice(0, 12));
+}
+
+/** Makes a data folder; root's is open to be walked through whatever the umask says. */
+export function makeHome(home) {
+  mkdirSync(home, { recursive: true });
+  if (!isRoot) return;
+  if (home.startsWith(rootHome)) chmodSync(rootHome, 0o755);
+  chmodSync(home, 0o711);
 }
 
 /** The places inside a data folder. */

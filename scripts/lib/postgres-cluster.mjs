@@ -31,6 +31,7 @@ export const isClusterComplete = (home) => existsSync(join(home, completeMarker)
 export async function openCluster({ home, port, secrets, throwaway = false }) {
   mkdirSync(home, { recursive: true });
   chmodSync(home, 0o711); // user postgres has to walk through
+  await requireReachable(home);
   await endServerLeftRunning(home);
   const directory = clusterDirectory(home);
   const { folder, major } = await postgresPrograms(directory);
@@ -59,6 +60,17 @@ export function connectionUrls(port, secrets) {
     owner: url('kerfyard_owner', secrets.ownerPassword),
     app: url('kerfyard_app', secrets.appPassword),
   };
+}
+
+/** Above the folder it is the person's choice who may walk through, so that is said and not changed. */
+async function requireReachable(home) {
+  const [command, ...args] = asPostgres(['test', '-x', home]);
+  const { code } = await run(command, args, { cwd: '/', allowFailure: true });
+  if (code === 0) return;
+  throw new Failure(
+    `User postgres cannot reach ${home}: a folder above is closed to others.\n` +
+      'Set KERFYARD_DATA_DIR (for tests TMPDIR) to a folder that all users may walk into.',
+  );
 }
 
 const control = (cluster, args, options) => {
