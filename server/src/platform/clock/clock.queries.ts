@@ -1,0 +1,1 @@
+export const NOW = `SELECT app_now() AS now`;

@@ -1,0 +1,22 @@
+import type { ErrorCode } from '@kerfyard/common/errors';
+import { AppError } from '../http/app-error.ts';
+
+/** The one place where a constraint's name becomes an answer for people. */
+const codes: Record<string, ErrorCode> = {
+  award_one_standing: 'already_awarded',
+  visit_crew_once: 'window_taken',
+  visit_truck_once: 'window_taken',
+  funding_line_once: 'already_set_aside',
+  release_completion_id_key: 'already_released',
+  completion_line_once: 'illegal_move',
+  signature_pkey: 'illegal_move',
+  ledger_no_overdraft: 'illegal_move',
+};
+
+/** Unique and exclusion violations of known constraints as an AppError; anything else is null and stays a fault. */
+export function databaseErrorToAppError(error: unknown): AppError | null {
+  const original = (error as { original?: { constraint?: unknown } } | null)?.original;
+  const name = typeof original?.constraint === 'string' ? original.constraint : '';
+  const code = codes[name];
+  return code === undefined ? null : new AppError(code);
+}

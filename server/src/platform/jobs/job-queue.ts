@@ -1,0 +1,80 @@
+import { Inject, Injectable, Logger, type OnApplicationShutdown } from '@nestjs/common';
+import PgBoss from 'pg-boss';
+import { Sequelize } from 'sequelize';
+import { CONFIG, type Config } from '../config/config.ts';
+import type { Tx } from '../database/unit-of-work.ts';
+import type { JobName, Jobs } from './queues.ts';
+
+interface SendOptions {
+  startAfter?: Date;
+  singletonKey?: string;
+}
+
+/**
+ * The one runner of later work (pg-boss). `send` writes the job's row in the caller's transaction, so a job exists
+ * exactly when the change it follows does. Delivery is at least once: handlers are idempotent by row id.
+ */
+@Injectable()
+export class JobQueue implements OnApplicationShutdown {
+  private readonly logger = new Logger(JobQueue.name);
+  private readonly boss: PgBoss;
+  private started: Promise<unknown> | null = null;
+
+  constructor(
+    @Inject(CONFIG) config: Config,
+    @Inject(Sequelize) private readonly sequelize: Sequelize,
+  ) {
+    this.boss = new PgBoss({
+      connectionString: config.databaseUrl,
+      migrate: false,
+      max: 4,
+      application_name: 'kerfyard-jobs',
+    });
+    this.boss.on('error', (error) => this.logger.error(error));
+  }
+
+  async start(): Promise<void> {
+    this.started ??= this.boss.start();
+    await this.started;
+  }
+
+  /** Put a job into the transaction. */
+  async send<Name extends JobName>(
+    tx: Tx,
+    name: Name,
+    data: Jobs[Name],
+    options: SendOptions = {},
+  ): Promise<void> {
+    const db = {
+      executeSql: async (text: string, values: unknown[]) => {
+        const [rows] = await this.sequelize.query(text, { bind: values, transaction: tx });
+        return { rows: rows as unknown[] };
+      },
+    };
+    await this.boss.send(name, data, { ...options, db });
+  }
+
+  /** Handle jobs of one kind, one at a time per worker; a throw retries with back-off. */
+  async work<Name extends JobName>(
+    name: Name,
+    handle: (data: Jobs[Name]) => Promise<void>,
+    workers = 1,
+  ): Promise<void> {
+    await this.start();
+    for (let n = 0; n < workers; n += 1) {
+      await this.boss.work<Jobs[Name]>(name, { pollingIntervalSeconds: 0.5 }, async ([job]) => {
+        if (job !== undefined) await handle(job.data);
+      });
+    }
+  }
+
+  /** Run a kind of job by the clock (cron, UTC); one run whatever the number of servers. */
+  async every(name: JobName, cron: string): Promise<void> {
+    await this.start();
+    await this.boss.schedule(name, cron, {});
+  }
+
+  async onApplicationShutdown(): Promise<void> {
+    if (this.started !== null) await this.boss.stop({ graceful: true, timeout: 8_000 });
+  }
+}
