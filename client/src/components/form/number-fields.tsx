@@ -1,0 +1,140 @@
+import { useState } from 'react';
+import { useController, type FieldValues } from 'react-hook-form';
+import { FieldFrame, type FieldWords, type Wiring } from './field-frame.tsx';
+import type { Bound } from './fields.tsx';
+import styles from './form.module.css';
+
+/** A typed number as the form keeps it: a number, null when empty, the text itself when it is no number. */
+type Typed = number | string | null;
+
+/** `1,234.5` → 1234.5; empty → null; anything else comes back as it is, for the schema to refuse. */
+export function readNumber(text: string): Typed {
+  const plain = text.replaceAll(',', '').trim();
+  if (plain === '') return null;
+  return /^-?(\d+\.?\d*|\.\d+)$/.test(plain) ? Number(plain) : text;
+}
+
+/** `1,234.5` dollars → 123450 cents, without ever holding dollars in a float. */
+export function readCents(text: string): Typed {
+  const plain = text.replace(/[$,\s]/g, '');
+  if (plain === '') return null;
+  const match = /^(\d*)(?:\.(\d{0,2}))?$/.exec(plain);
+  if (match === null || plain === '.') return text;
+  return Number(match[1] ?? 0) * 100 + Number((match[2] ?? '').padEnd(2, '0'));
+}
+
+function showNumber(value: unknown): string {
+  return typeof value === 'number' ? String(value) : typeof value === 'string' ? value : '';
+}
+
+function showCents(value: unknown): string {
+  if (typeof value !== 'number') return showNumber(value);
+  const cents = value % 100;
+  const dollars = String((value - cents) / 100).replace(/\B(?=(\d{3})+$)/g, ',');
+  return cents === 0 ? dollars : `${dollars}.${String(cents).padStart(2, '0')}`;
+}
+
+interface Reading {
+  read: (text: string) => Typed;
+  show: (value: unknown) => string;
+}
+
+/** Keeps the text as typed ("12." is half a number) while the form holds what it means. */
+function useTypedText(value: unknown, change: (next: Typed) => void, { read, show }: Reading) {
+  const [text, setText] = useState(() => show(value));
+  // The form's value may change from outside (a reset, a prefill): the text follows only then.
+  const shown = Object.is(read(text), value ?? null) ? text : show(value);
+  return {
+    text: shown,
+    type: (next: string) => {
+      setText(next);
+      change(read(next));
+    },
+    settle: () => setText(show(value)),
+  };
+}
+
+interface FigureInputProps {
+  wiring: Wiring;
+  before?: string;
+  unit?: string;
+  disabled: boolean;
+  typed: ReturnType<typeof useTypedText>;
+  field: { ref: (element: HTMLInputElement | null) => void; name: string; onBlur: () => void };
+}
+
+function FigureInput({ wiring, before, unit, disabled, typed, field }: FigureInputProps) {
+  return (
+    <span className={styles.withUnit} style={{ ['--unit-room' as string]: `${(unit ?? '').length}ch` }}>
+      {before !== undefined && (
+        <span className={styles.before} aria-hidden="true">
+          {before}
+        </span>
+      )}
+      <input
+        {...wiring}
+        ref={field.ref}
+        name={field.name}
+        className={styles.control}
+        inputMode="decimal"
+        autoComplete="off"
+        disabled={disabled}
+        value={typed.text}
+        onChange={(event) => typed.type(event.target.value)}
+        onBlur={() => {
+          typed.settle();
+          field.onBlur();
+        }}
+      />
+      {unit !== undefined && <span className={styles.unit}>{unit}</span>}
+    </span>
+  );
+}
+
+/** A number with its unit beside it. The form's value is a number, or null when nothing is typed. */
+export function NumberField<Input extends FieldValues, Output>(
+  props: Bound<Input, Output> & FieldWords & { unit?: string; disabled?: boolean },
+) {
+  const { control, name, label, hint, optional, unit, disabled = false } = props;
+  const { field, fieldState } = useController({ control, name });
+  const typed = useTypedText(field.value, field.onChange, { read: readNumber, show: showNumber });
+  return (
+    <FieldFrame
+      name={name}
+      label={label}
+      hint={hint}
+      optional={optional ?? false}
+      error={fieldState.error?.message}
+    >
+      {(wiring) => (
+        <FigureInput
+          wiring={wiring}
+          {...(unit === undefined ? {} : { unit })}
+          disabled={disabled}
+          typed={typed}
+          field={field}
+        />
+      )}
+    </FieldFrame>
+  );
+}
+
+/** Dollars typed, whole cents kept. */
+export function MoneyField<Input extends FieldValues, Output>(
+  props: Bound<Input, Output> & FieldWords & { disabled?: boolean },
+) {
+  const { control, name, label, hint, optional, disabled = false } = props;
+  const { field, fieldState } = useController({ control, name });
+  const typed = useTypedText(field.value, field.onChange, { read: readCents, show: showCents });
+  return (
+    <FieldFrame
+      name={name}
+      label={label}
+      hint={hint}
+      optional={optional ?? false}
+      error={fieldState.error?.message}
+    >
+      {(wiring) => <FigureInput wiring={wiring} before="$" disabled={disabled} typed={typed} field={field} />}
+    </FieldFrame>
+  );
+}

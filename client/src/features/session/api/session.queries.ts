@@ -1,0 +1,40 @@
+import type { MeView, SignIn, SignUp } from '@kerfyard/common/people';
+import { queryOptions } from '@tanstack/react-query';
+import { api } from '../../../lib/api-client.ts';
+import { isApiError } from '../../../lib/api-error.ts';
+import { sessionGate } from '../../../lib/session-gate.ts';
+
+export const sessionKeys = { me: ['session', 'me'] as const };
+
+/** Who is signed in; null when nobody is. */
+export const meQuery = queryOptions({
+  queryKey: sessionKeys.me,
+  staleTime: Infinity,
+  meta: { live: true },
+  queryFn: async ({ signal }): Promise<MeView | null> => {
+    try {
+      const me = await api.get<MeView>('/api/auth/me', { signal, whenSignedOut: 'throw' });
+      remember(me);
+      return me;
+    } catch (error) {
+      if (!isApiError(error, 'unauthenticated')) throw error;
+      sessionGate.know(null);
+      return null;
+    }
+  },
+});
+
+export function remember(me: MeView): void {
+  sessionGate.know({ userId: me.user.id, email: me.user.email });
+}
+
+export const postSignUp = (body: SignUp, idempotencyKey: string) =>
+  api.post<void>('/api/auth/sign-up', body, { idempotencyKey, whenSignedOut: 'throw' });
+
+export const postVerify = (token: string) =>
+  api.post<void>('/api/auth/verify', { token }, { whenSignedOut: 'throw' });
+
+export const postSignIn = (body: SignIn) =>
+  api.post<MeView>('/api/auth/sign-in', body, { whenSignedOut: 'throw' });
+
+export const postSignOut = () => api.post<void>('/api/auth/sign-out', undefined, { whenSignedOut: 'throw' });

@@ -1,0 +1,36 @@
+import type { CompanyKind } from '@kerfyard/common/people';
+
+/** Every address of the app in one place; a feature adds its own here and nowhere writes one by hand. */
+export const paths = {
+  home: '/',
+  signUp: (kind?: CompanyKind) => (kind === undefined ? '/sign-up' : `/sign-up?as=${asParameter[kind]}`),
+  signIn: (next?: string) => (next === undefined ? '/sign-in' : `/sign-in?next=${encodeURIComponent(next)}`),
+  company: '/company',
+  scopes: '/scopes',
+  openScopes: '/open-scopes',
+  bids: '/bids',
+  work: '/work',
+  money: '/money',
+  books: '/books',
+} as const;
+
+const asParameter: Record<CompanyKind, string> = { general_contractor: 'gc', cutting_contractor: 'crew' };
+
+/** The company kind that `?as=` names, or undefined. */
+export function kindFromParameter(value: string | null): CompanyKind | undefined {
+  if (value === 'gc') return 'general_contractor';
+  if (value === 'crew') return 'cutting_contractor';
+  return undefined;
+}
+
+/** Where a person lands after signing in. */
+export function homeOf(who: { isStaff: boolean; kind: CompanyKind | null }): string {
+  if (who.isStaff) return paths.books;
+  return who.kind === 'cutting_contractor' ? paths.openScopes : paths.scopes;
+}
+
+/** A path to return to after signing in: inside this app only, never another site's address. */
+export function safeNext(value: string | null): string | undefined {
+  if (value === null || !/^\/(?![/\\])/.test(value)) return undefined;
+  return value;
+}

@@ -1,0 +1,5 @@
+import type { FeatureRoute } from '../lib/feature-route.ts';
+
+export const routes: readonly FeatureRoute[] = [
+  { path: '/company', audience: 'company', words: ['company'], page: () => import('./company-page.tsx') },
+];
