@@ -21,8 +21,15 @@ export const scopesAndBids: Migration = {
       time_zone text,
       city text NOT NULL DEFAULT '',
       state text NOT NULL DEFAULT '',
-      lat double precision,
-      lon double precision,
+      lat double precision CHECK (lat BETWEEN -90 AND 90),
+      lon double precision CHECK (lon BETWEEN -180 AND 180),
+      -- The site on the unit sphere: distance between two such points grows exactly as the way over the ground
+      -- does, so one index serves both "within so many miles" and "nearest first".
+      place cube GENERATED ALWAYS AS (
+        cube(ARRAY[
+          cos(radians(lat)) * cos(radians(lon)), cos(radians(lat)) * sin(radians(lon)), sin(radians(lat))
+        ])
+      ) STORED,
       methods text[] NOT NULL DEFAULT '{}',
       inch_feet double precision,
       totals jsonb,
@@ -32,8 +39,10 @@ export const scopesAndBids: Migration = {
       published_at timestamptz(3),
       opened_at timestamptz(3),
       closed_reason text,
-      -- One more with each change that people hear of, taken under this row's lock.
+      -- One more with each change that people hear of, taken under this row's lock. Bids coming in count apart:
+      -- only the general contractor hears of them, and gaps in "seq" would tell rivals how many there are.
       seq bigint NOT NULL DEFAULT 0,
+      bid_seq bigint NOT NULL DEFAULT 0,
       created_at timestamptz(3) NOT NULL DEFAULT app_now(),
       updated_at timestamptz(3) NOT NULL DEFAULT app_now(),
       CHECK (status IN ('draft', 'discarded') OR (revision IS NOT NULL AND due_at IS NOT NULL AND mode IS NOT NULL))
@@ -42,7 +51,9 @@ export const scopesAndBids: Migration = {
     CREATE INDEX scope_open_newest ON scope (published_at DESC, id DESC) WHERE status = 'open';
     CREATE INDEX scope_open_due ON scope (due_at, id) WHERE status = 'open';
     CREATE INDEX scope_open_size ON scope (inch_feet DESC, id DESC) WHERE status = 'open';
-    CREATE INDEX scope_open_place ON scope (lat, lon) WHERE status = 'open';
+    CREATE INDEX scope_open_place ON scope USING gist (place) WHERE status = 'open';
+    -- How many scopes of a company came due, and how many it awarded: counted from the index alone.
+    CREATE INDEX scope_record ON scope (company_id, status) WHERE status IN ('due', 'awarded', 'closed_without_award');
 
     CREATE TABLE scope_revision (
       scope_id uuid NOT NULL REFERENCES scope (id),
@@ -79,7 +90,8 @@ export const scopesAndBids: Migration = {
       scope_id uuid NOT NULL REFERENCES scope (id),
       company_id uuid NOT NULL REFERENCES company (id),
       revision integer NOT NULL,
-      status text NOT NULL CHECK (status IN ('in', 'withdrawn')),
+      -- 'opened': its content has become a row of "bid" with the same id.
+      status text NOT NULL CHECK (status IN ('in', 'withdrawn', 'opened')),
       ciphertext bytea NOT NULL,
       key_for_scope bytea NOT NULL,
       key_for_bidder bytea NOT NULL,
@@ -88,6 +100,7 @@ export const scopesAndBids: Migration = {
       version integer NOT NULL DEFAULT 1,
       UNIQUE (scope_id, company_id)
     );
+    CREATE INDEX sealed_bid_company ON sealed_bid (company_id, submitted_at DESC, id DESC);
 
     CREATE TABLE bid_draft (
       scope_id uuid NOT NULL REFERENCES scope (id),
