@@ -26,9 +26,9 @@ export const scopesAndBids: Migration = {
       -- The site on the unit sphere: distance between two such points grows exactly as the way over the ground
       -- does, so one index serves both "within so many miles" and "nearest first".
       place cube GENERATED ALWAYS AS (
-        cube(ARRAY[
+        CASE WHEN lat IS NOT NULL AND lon IS NOT NULL THEN cube(ARRAY[
           cos(radians(lat)) * cos(radians(lon)), cos(radians(lat)) * sin(radians(lon)), sin(radians(lat))
-        ])
+        ]) END
       ) STORED,
       methods text[] NOT NULL DEFAULT '{}',
       inch_feet double precision,
