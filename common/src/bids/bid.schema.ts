@@ -18,10 +18,10 @@ export const bidLineSchema = z.strictObject({
   unit: z.enum(bidUnits),
   /** In hundredths of a cent per unit, so that $0.85 per inch-foot is 8500. */
   rate: z
-    .number()
-    .int()
-    .min(0)
-    .max(MAX_CENTS * 100),
+    .number('A rate in dollars')
+    .int('To a hundredth of a cent')
+    .min(0, 'Not negative')
+    .max(MAX_CENTS * 10, 'At most $1,000,000 for one unit'),
   /** Percentages that multiply: 150 is × 1.5. */
   factors: z.array(z.number().int().min(50).max(400)).max(6).default([]),
 });

@@ -3,3 +3,5 @@ export * from './responsibilities.ts';
 export * from './scope.schema.ts';
 export * from './scope.state.ts';
 export * from './scope.views.ts';
+export * from './totals.ts';
+export * from './methods-of-cuts.ts';
