@@ -3,6 +3,8 @@ export { describeRange, type NumberRange } from './check.ts';
 export * from './types.ts';
 export * from './limits.ts';
 export type { Certainty, NumberOrigin, WorkingInput, WorkingSource, WorkingStep } from './working.ts';
+export * from './tables/index.ts';
+
 export { inchFeet } from './inch-feet.ts';
 export { takeoffCut } from './takeoff/takeoff-cut.ts';
 export { takeoffCutList } from './takeoff/takeoff-cut-list.ts';
@@ -14,17 +16,36 @@ export {
   type CorePlacement,
   type OvercutInput,
 } from './overcut.ts';
+export * from './corner-choices.ts';
 export { coreWeightLb, slabWeightLb, type CoreWeightInput, type SlabWeightInput } from './weights.ts';
-export { passPlan, type PassPlan, type PassPlanInput } from './passes.ts';
-export { stitchHoles, stitchPitchToleranceIn, type StitchHoles, type StitchInput } from './stitch.ts';
+export * from './passes.ts';
+export * from './stitch.ts';
 export {
   bladeReachIn,
+  bladeReachWithSource,
   rpmForSurfaceSpeed,
   surfaceSpeedSfm,
   type BladeReachInput,
   type CompanyReach,
+  type KnownReach,
 } from './blades.ts';
+export * from './methods.ts';
+export * from './production.ts';
+
+export * from './exposure/silica.ts';
+export * from './exposure/noise.ts';
+export * from './exposure/vibration.ts';
+
+export * from './slings.ts';
+export * from './cover.ts';
+export * from './excavation.ts';
+export * from './trench.ts';
 export { jointPlan, sawsForWindow, type JointPlan, type JointPlanInput } from './joints.ts';
+export * from './haul.ts';
 export { lipTreatment, type LipTreatment, type LipTreatmentKind } from './lip.ts';
+export * from './power.ts';
+export * from './dig-date.ts';
+export * from './crew-hours.ts';
 export * from './pricing.ts';
-export * from './tables/index.ts';
+export * from './tabulation.ts';
+export { explain } from './explain.ts';

@@ -1,5 +1,13 @@
 export type { Provenance, SourcedTable } from './provenance.ts';
 export * from './blade-reach.ts';
+export * from './common-practice.ts';
+export * from './conduit.ts';
+export * from './cover.ts';
+export * from './excavation.ts';
 export * from './joints.ts';
 export * from './lip.ts';
+export * from './methods.ts';
+export * from './noise.ts';
+export * from './silica.ts';
 export * from './unit-weights.ts';
+export * from './vibration.ts';
