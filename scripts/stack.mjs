@@ -27,9 +27,10 @@ import { requireBuilt } from './lib/services.mjs';
 import { createShutdown, onStopSignal } from './lib/shutdown.mjs';
 import { startControl } from './lib/stack-control.mjs';
 
-const usage = `node scripts/stack.mjs [--seed] [--no-app] [--mode test|demo|development]
+const usage = `node scripts/stack.mjs [--seed] [--no-app [--migrate]] [--mode test|demo|development]
   --seed     fill it with the demo
-  --no-app   database and stand-ins only, without migrations; a stand-in that is not built is left out
+  --no-app   database and stand-ins only; a stand-in that is not built is left out
+  --migrate  with --no-app: bring the schema up to date all the same
 Environment: PORT (the app's; else a free one), CLIENT_DIST.
 Prints one line of JSON when ready (and sends it to a parent process); stops and deletes everything on Ctrl-C.`;
 
@@ -92,13 +93,15 @@ function createAppControl(context, env) {
   };
 }
 
-async function openAppPart(context, env, urls, options) {
-  const { places } = context;
+async function fillDatabase({ places }, env, urls, options) {
   const ownerEnvironment = migrationEnvironment(env, urls);
   await runProgram(programs.migrate, { env: ownerEnvironment, logFile: programLog(places, 'migrate') });
   if (options.seed) {
     await runProgram(programs.seed, { env: ownerEnvironment, logFile: programLog(places, 'seed') });
   }
+}
+
+async function openApp(context, env) {
   const commands = createAppControl(context, env);
   shutdown.add(async () => {
     await commands['resume-app']();
@@ -115,6 +118,7 @@ async function main() {
     {
       seed: { type: 'boolean', default: false },
       'no-app': { type: 'boolean', default: false },
+      migrate: { type: 'boolean', default: false },
       mode: { type: 'string', default: 'test' },
     },
     usage,
@@ -135,7 +139,8 @@ async function main() {
     appUrl: appUrl(ports),
     clientDist: process.env.CLIENT_DIST ?? clientDist,
   });
-  const controlUrl = withApp ? await openAppPart(context, env, urls, options) : null;
+  if (withApp || options.migrate) await fillDatabase(context, env, urls, options);
+  const controlUrl = withApp ? await openApp(context, env) : null;
   announce({
     url: withApp ? appUrl(ports) : null,
     stripeUrl: present.includes('stripe') ? stripeUrl(ports) : null,

@@ -2,15 +2,16 @@ import { spawn } from 'node:child_process';
 import { createWriteStream, mkdirSync } from 'node:fs';
 import { dirname } from 'node:path';
 import { createInterface } from 'node:readline';
+import { digest } from './digest.mjs';
 import { Failure } from './failure.mjs';
 import { root } from './paths.mjs';
 
-const tailLines = 30;
+const keptLines = 20_000;
 
 /**
- * Runs a command to its end and resolves to `{ code, output }`, where `output` is the last lines of both streams.
+ * Runs a command to its end and resolves to `{ code, output }`, where `output` is what matters of both streams.
  * Options: `cwd` (the checkout), `env`, `input` (text for stdin), `logFile` (gets everything), `onLine`, `allowFailure`.
- * A non-zero exit is a Failure that shows the output's tail, unless `allowFailure`.
+ * A non-zero exit is a Failure that shows that output, unless `allowFailure`.
  */
 export async function run(command, args, options = {}) {
   const { cwd = root, env = process.env, input, logFile, onLine, allowFailure = false } = options;
@@ -20,11 +21,11 @@ export async function run(command, args, options = {}) {
     stdio: [input === undefined ? 'ignore' : 'pipe', 'pipe', 'pipe'],
   });
   const log = logFile ? openLog(logFile) : null;
-  const tail = [];
+  const lines = [];
   const readers = [child.stdout, child.stderr].map(async (stream) => {
     for await (const line of createInterface({ input: stream })) {
-      tail.push(line);
-      if (tail.length > tailLines) tail.shift();
+      lines.push(line);
+      if (lines.length > keptLines) lines.shift();
       log?.write(`${line}\n`);
       onLine?.(line);
     }
@@ -36,7 +37,7 @@ export async function run(command, args, options = {}) {
   });
   await Promise.all(readers);
   log?.end();
-  const output = tail.join('\n');
+  const output = digest(lines);
   if (code !== 0 && !allowFailure) {
     throw new Failure(`${[command, ...args].join(' ')} ended with ${code}:\n${output}`);
   }

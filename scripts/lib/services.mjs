@@ -3,18 +3,19 @@ import { closeSync, existsSync, mkdirSync, openSync, readFileSync, rmSync } from
 import { connect } from 'node:net';
 import { join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
+import { digest } from './digest.mjs';
 import { Failure } from './failure.mjs';
 import { root } from './paths.mjs';
 import { writePidFile } from './pid-files.mjs';
 
 const guard = new URL('./end-with-parent.mjs', import.meta.url).href;
 const stopWaitMs = 8_000;
-const tailLines = 25;
+const lastLines = 200;
 
-/** The last lines of a log, for an error message. */
+/** What matters of a log's end, for an error message. */
 export function logTail(logFile) {
   if (!existsSync(logFile)) return '(no log)';
-  return readFileSync(logFile, 'utf8').trimEnd().split('\n').slice(-tailLines).join('\n');
+  return digest(readFileSync(logFile, 'utf8').trimEnd().split('\n').slice(-lastLines));
 }
 
 /** Throws a Failure that says what to do when a program is not built. */
