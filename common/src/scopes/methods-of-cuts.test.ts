@@ -1,35 +1,58 @@
 import { describe, expect, it } from 'vitest';
-import { cutSchema, methodsOfCuts, type CutInput } from './index.ts';
+import { methods } from '../people/index.ts';
+import { cutSchema, methodsOfCuts, type CutInput, type CutPlace } from './index.ts';
 
 const cuts = (...inputs: CutInput[]) => inputs.map((input) => cutSchema.parse(input));
+const outside: CutPlace = {
+  face: 'floor',
+  below: 'soil',
+  indoors: false,
+  enginesAllowed: true,
+  overcutsAllowed: true,
+};
+const line: CutInput = { kind: 'line', lengthFt: 10, depthIn: 10, count: 1 };
+const opening: CutInput = {
+  kind: 'opening',
+  lengthFt: 4,
+  widthFt: 7,
+  thicknessIn: 12,
+  corners: 'overcut',
+  count: 1,
+};
 
-describe('methods a cut list is commonly done by', () => {
-  it.each([
-    ['a deep floor line', 'floor', [{ kind: 'line', lengthFt: 10, depthIn: 10, count: 1 }], ['flat_saw']],
-    [
-      'a shallow wall line',
-      'wall',
-      [{ kind: 'line', lengthFt: 10, depthIn: 4, count: 1 }],
-      ['wall_saw', 'hand_saw'],
-    ],
-    ['cores alone', 'ceiling', [{ kind: 'core', diameterIn: 4, depthIn: 8, count: 2 }], ['core_drill']],
-    [
-      'an opening with cored corners',
-      'wall',
-      [{ kind: 'opening', lengthFt: 4, widthFt: 7, thicknessIn: 12, corners: 'cored', count: 1 }],
-      ['wall_saw', 'core_drill'],
-    ],
-    [
-      'a mixed list, each method once',
-      'floor',
-      [
-        { kind: 'core', diameterIn: 4, depthIn: 8, count: 2 },
-        { kind: 'trench', lengthFt: 40, widthFt: 2, thicknessIn: 6, count: 1 },
-        { kind: 'line', lengthFt: 10, depthIn: 5, count: 1 },
-      ],
-      ['flat_saw', 'hand_saw', 'core_drill'],
-    ],
-  ] as const)('%s', (_, face, inputs, expected) => {
-    expect(methodsOfCuts(cuts(...inputs), { face })).toEqual(expected);
+describe('methods a cut list can be done by', () => {
+  it('are the core drill alone for cores', () => {
+    expect(methodsOfCuts(cuts({ kind: 'core', diameterIn: 4, depthIn: 8, count: 2 }), outside)).toEqual([
+      'core_drill',
+    ]);
+  });
+
+  it('reach the depth: 10 in of floor is too deep for a hand saw, and for an electric flat saw indoors', () => {
+    expect(methodsOfCuts(cuts(line), outside)).toEqual(expect.arrayContaining(['flat_saw', 'wall_saw']));
+    expect(methodsOfCuts(cuts(line), outside)).not.toContain('hand_saw');
+    expect(methodsOfCuts(cuts(line), { ...outside, indoors: true })).not.toContain('flat_saw');
+  });
+
+  it('keep round blades out of corners that must not be overcut, unless the corners are cored', () => {
+    const wall: CutPlace = { ...outside, face: 'wall', overcutsAllowed: false };
+    expect(methodsOfCuts(cuts(opening), wall)).not.toContain('wall_saw');
+    expect(methodsOfCuts(cuts({ ...opening, corners: 'cored' }), wall)).toEqual(
+      expect.arrayContaining(['wall_saw', 'core_drill']),
+    );
+  });
+
+  it('are listed once each for a mixed list', () => {
+    const found = methodsOfCuts(
+      cuts(line, line, { kind: 'core', diameterIn: 4, depthIn: 8, count: 2 }),
+      outside,
+    );
+    expect(new Set(found).size).toBe(found.length);
+    expect(found).toEqual(methods.filter((method) => found.includes(method)));
+    expect(found).toContain('core_drill');
+  });
+
+  it('are all of them where no machine fits', () => {
+    const giant = cuts({ kind: 'core', diameterIn: 96, depthIn: 8, count: 1 });
+    expect(methodsOfCuts(giant, outside)).toEqual([...methods]);
   });
 });
