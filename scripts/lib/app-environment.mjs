@@ -21,7 +21,16 @@ const nodeEnvironments = {
  * The server's whole environment. `appUrl` is where browsers find the app (in development the client's own server),
  * `ports`: app, stripe, mailWeb, smtp. `urls`: the cluster's. `places`: the data folder's.
  */
-export function serverEnvironment({ mode, ports, appUrl, urls, secrets, places, clientDist }) {
+export function serverEnvironment({
+  mode,
+  ports,
+  appUrl,
+  urls,
+  secrets,
+  places,
+  clientDist,
+  rateLimitFactor = 1,
+}) {
   return {
     ...inheritedEnvironment(),
     NODE_ENV: nodeEnvironments[mode],
@@ -44,8 +53,7 @@ export function serverEnvironment({ mode, ports, appUrl, urls, secrets, places, 
     MAIL_PAGE_URL: mailUrl(ports),
     DEMO_SIGN_INS_FILE: places.signInsFile,
     LOG_LEVEL: process.env.LOG_LEVEL ?? 'info',
-    // Tests come from one address and sign in far more often than people do.
-    RATE_LIMIT_FACTOR: mode === 'test' ? '1000' : '1',
+    RATE_LIMIT_FACTOR: String(rateLimitFactor),
   };
 }
 
