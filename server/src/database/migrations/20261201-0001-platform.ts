@@ -80,22 +80,28 @@ export const platform: Migration = {
       ip text NOT NULL,
       user_agent text NOT NULL
     );
-    CREATE INDEX session_user ON session (user_id) WHERE ended_at IS NULL;
-    CREATE INDEX session_previous ON session (previous_hash);
+    CREATE INDEX session_by_user ON session (user_id) WHERE ended_at IS NULL;
 
-    CREATE TABLE one_time_token (
+    -- A sign-up waits here until its link is used; only then are person and company made. So the same address may wait
+    -- several times, each with the password typed then, and an unproven address owns nothing.
+    CREATE TABLE sign_up (
       id uuid PRIMARY KEY,
-      user_id uuid NOT NULL REFERENCES app_user (id),
-      purpose text NOT NULL CHECK (purpose IN ('verify_email')),
-      token_hash bytea NOT NULL UNIQUE,
       email citext NOT NULL,
+      name text NOT NULL,
+      password_hash text NOT NULL,
+      company_kind text NOT NULL,
+      company_name text NOT NULL,
+      company_phone text NOT NULL,
+      token_hash bytea NOT NULL UNIQUE,
       expires_at timestamptz(3) NOT NULL,
       used_at timestamptz(3),
       created_at timestamptz(3) NOT NULL DEFAULT app_now()
     );
+    CREATE INDEX sign_up_email ON sign_up (email);
 
     -- Limits are counted here and not in memory, so that two servers do not double them.
-    CREATE TABLE rate_limit (
+    -- Unlogged: a crash may forget counts, and a count costs no disk flush.
+    CREATE UNLOGGED TABLE rate_limit (
       key text NOT NULL,
       window_start timestamptz(3) NOT NULL,
       hits integer NOT NULL,
@@ -155,7 +161,7 @@ export const platform: Migration = {
       FOR EACH STATEMENT EXECUTE FUNCTION refuse_change();
   `,
   down: `
-    DROP TABLE audit_event, file, idempotency_key, rate_limit, one_time_token, session, membership, app_user, company, counter, app_clock CASCADE;
+    DROP TABLE audit_event, file, idempotency_key, rate_limit, sign_up, session, membership, app_user, company, counter, app_clock CASCADE;
     DROP FUNCTION refuse_change, app_now;
   `,
 };

@@ -25,6 +25,7 @@ const environmentSchema = z.object({
   LOG_LEVEL: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
   RATE_LIMIT_FACTOR: z.coerce.number().min(1).default(1),
   TRUST_PROXY: z.coerce.number().int().min(0).default(0),
+  DRAIN_MS: z.coerce.number().int().min(0).max(60_000).default(0),
 });
 
 /** Everything the server is told from outside, read once at start. */
@@ -48,7 +49,10 @@ export interface Config {
   mail: { smtpUrl: string; from: string; pageUrl: string | null };
   logLevel: 'silent' | 'error' | 'warn' | 'info' | 'debug';
   rateLimitFactor: number;
+  /** How many proxies stand before the server; 0 believes no forwarded address. */
   trustProxy: number;
+  /** How long a stopping server still answers while it says it is not ready. */
+  drainMs: number;
 }
 
 /** Injection token of the one Config. */
@@ -96,6 +100,7 @@ export function readConfig(env: NodeJS.ProcessEnv = process.env): Config {
     logLevel: e.LOG_LEVEL,
     rateLimitFactor: e.RATE_LIMIT_FACTOR,
     trustProxy: e.TRUST_PROXY,
+    drainMs: e.DRAIN_MS,
   };
 }
 

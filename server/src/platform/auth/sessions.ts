@@ -1,0 +1,165 @@
+import { Injectable } from '@nestjs/common';
+import type { Actor } from '@kerfyard/common/people';
+import { Audit } from '../audit/audit.ts';
+import { toNumber } from '../database/codecs.ts';
+import { UnitOfWork, type Tx } from '../database/unit-of-work.ts';
+import { newId } from '../ids/ids.ts';
+import { LiveHints } from '../realtime/live-hints.ts';
+import type { Origin } from './access.decorators.ts';
+import { AccessTokens, type AccessClaims } from './access-tokens.ts';
+import type { SessionTokens } from './cookies.ts';
+import {
+  hasHash,
+  newRefreshToken,
+  openSuccessor,
+  parseRefreshToken,
+  sealSuccessor,
+  type RefreshToken,
+} from './refresh-token.ts';
+import {
+  END_SESSION,
+  INSERT_SESSION,
+  LOCK_SESSION,
+  ROTATE_SESSION,
+  SELECT_ACTOR,
+  SELECT_DEAD_SESSIONS,
+  SELECT_SESSION_STATE,
+  TOUCH_SESSION,
+  type ActorRow,
+  type SessionRow,
+} from './session.queries.ts';
+
+const DAY = 86_400;
+/** A session ends after this long without a refresh (pages refresh every few minutes while open). */
+const IDLE_SECONDS = 7 * DAY;
+/** And after this long whatever happens. */
+const ABSOLUTE_SECONDS = 30 * DAY;
+/** Two tabs, or a lost reply: the token just replaced still leads to its one successor. */
+const GRACE_SECONDS = 30;
+
+/** Opens, renews and ends sessions. The row is the session; tokens only point at it. */
+@Injectable()
+export class Sessions {
+  constructor(
+    private readonly uow: UnitOfWork,
+    private readonly accessTokens: AccessTokens,
+    private readonly audit: Audit,
+    private readonly hints: LiveHints,
+  ) {}
+
+  /** Who a token's session belongs to, or null when it ended, ran out or the person was deactivated. */
+  async actor(claims: Pick<AccessClaims, 'sid' | 'sub'>): Promise<Actor | null> {
+    const row = await this.uow.row<ActorRow>(null, SELECT_ACTOR, [claims.sid, claims.sub, IDLE_SECONDS]);
+    return row === null ? null : toActor(row, claims.sid);
+  }
+
+  /** A new session; never one that a browser brought along. */
+  async open(tx: Tx, userId: string, origin: Origin): Promise<SessionTokens> {
+    const refresh = newRefreshToken(newId());
+    await this.uow.rows(tx, INSERT_SESSION, [
+      refresh.sessionId,
+      userId,
+      refresh.hash,
+      ABSOLUTE_SECONDS,
+      origin.ip,
+      origin.userAgent,
+    ]);
+    return this.tokens(userId, refresh);
+  }
+
+  /**
+   * New tokens for a refresh token, or null. The token is replaced by its successor; one that was replaced more than
+   * the grace ago is in two hands, so its session ends for both.
+   */
+  async refresh(cookie: string | null, origin: Origin): Promise<SessionTokens | null> {
+    const token = parseRefreshToken(cookie);
+    if (token === null) return null;
+    const result = await this.uow.run((tx) => this.rotate(tx, token, origin));
+    if (result === 'reused') {
+      this.hints.endSession(token.sessionId);
+      return null;
+    }
+    return result;
+  }
+
+  private async rotate(
+    tx: Tx,
+    token: RefreshToken,
+    origin: Origin,
+  ): Promise<SessionTokens | 'reused' | null> {
+    await this.uow.rows(tx, LOCK_SESSION, [token.sessionId]);
+    const session = await this.uow.row<SessionRow>(tx, SELECT_SESSION_STATE, [
+      token.sessionId,
+      GRACE_SECONDS,
+      IDLE_SECONDS,
+    ]);
+    if (session === null || !session.is_live) return null;
+    if (hasHash(token, session.refresh_hash)) {
+      // Replaced a moment ago: once per grace is enough, and the one before keeps leading to this one.
+      if (session.is_in_grace) {
+        await this.uow.rows(tx, TOUCH_SESSION, [session.id]);
+        return this.tokens(session.user_id, token);
+      }
+      const successor = newRefreshToken(session.id);
+      await this.uow.rows(tx, ROTATE_SESSION, [session.id, successor.hash, sealSuccessor(token, successor)]);
+      return this.tokens(session.user_id, successor);
+    }
+    if (session.is_in_grace && session.successor_sealed !== null && hasHash(token, session.previous_hash)) {
+      return this.tokens(session.user_id, openSuccessor(token, session.successor_sealed));
+    }
+    await this.end(tx, session.id, 'refresh_reused', origin);
+    return 'reused';
+  }
+
+  /** Ends a session in the transaction; the caller closes its sockets after the commit by `LiveHints.endSession`. */
+  async end(tx: Tx, sessionId: string, because: string, origin: Origin): Promise<void> {
+    const ended = await this.uow.row<{ user_id: string }>(tx, END_SESSION, [sessionId, because]);
+    if (ended === null) return;
+    await this.audit.write(tx, {
+      actor: null,
+      action: 'session.ended',
+      subject: { type: 'session', id: sessionId },
+      detail: { because, userId: ended.user_id },
+      origin,
+    });
+  }
+
+  /** Which of these sessions may no longer hold a socket open. */
+  async dead(sessionIds: string[]): Promise<string[]> {
+    const rows = await this.uow.rows<{ id: string }>(null, SELECT_DEAD_SESSIONS, [
+      sessionIds,
+      null,
+      IDLE_SECONDS,
+    ]);
+    return rows.map((row) => row.id);
+  }
+
+  private tokens(userId: string, refresh: RefreshToken): SessionTokens {
+    return {
+      access: this.accessTokens.sign(userId, refresh.sessionId),
+      refresh: refresh.text,
+      refreshUntil: new Date(Date.now() + IDLE_SECONDS * 1_000),
+    };
+  }
+}
+
+function toActor(row: ActorRow, sessionId: string): Actor {
+  const isOwner = row.role === 'owner';
+  const limit = (cents: string | null) => (isOwner ? null : toNumber(cents));
+  const hasCompany = row.company_id !== null && row.company_kind !== null && row.company_name !== null;
+  return {
+    userId: row.user_id,
+    sessionId,
+    name: row.name,
+    isStaff: row.is_staff,
+    company: hasCompany
+      ? { id: row.company_id as string, kind: row.company_kind!, name: row.company_name! }
+      : null,
+    role: row.role,
+    limits: {
+      signCents: limit(row.sign_limit_cents),
+      setAsideCents: limit(row.set_aside_limit_cents),
+      changeCents: limit(row.change_limit_cents),
+    },
+  };
+}
