@@ -124,6 +124,15 @@ const inItsHome = [
   ['client/src/lib/api-client.ts', "export const load = () => fetch('/api/bids');"],
 ];
 
+describe('import cycles', () => {
+  it('are refused', async () => {
+    // The index of money imports cents, so cents must not import the index.
+    assert.deepEqual(await broken('common/src/money/cents.ts', "export { splitCents } from './index.ts';"), [
+      'import-x/no-cycle',
+    ]);
+  });
+});
+
 describe('things with one home', () => {
   for (const [path, text, rule] of oneHome) {
     it(`${path} must not: ${text}`, async () => assert.deepEqual(await broken(path, text), [rule]));
