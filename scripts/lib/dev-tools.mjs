@@ -1,4 +1,6 @@
 import { spawn } from 'node:child_process';
+import { existsSync } from 'node:fs';
+import { join } from 'node:path';
 import { createInterface } from 'node:readline';
 import { inRoot, root } from './paths.mjs';
 
@@ -9,7 +11,9 @@ const untilInputCloses = '"$@" </dev/null & cat >/dev/null; trap "" TERM; kill -
  * Starts a watching tool from node_modules/.bin with its lines shown under its name. Returns the function that stops it.
  */
 export function spawnTool({ name, args, env, cwd = root }) {
-  const command = [inRoot('node_modules/.bin', name), ...args];
+  // A workspace may have a version of its own.
+  const program = [join(cwd, 'node_modules/.bin', name), inRoot('node_modules/.bin', name)].find(existsSync);
+  const command = [program, ...args];
   const shell = spawn('/bin/sh', ['-c', untilInputCloses, name, ...command], {
     cwd,
     env,
