@@ -1,6 +1,6 @@
 import { checkNumber, checkNumberOr, checkObject } from './check.ts';
 import { bladeDiameterInRange, countRange, passThroughInRange, thicknessInRange } from './limits.ts';
-import { overcutOf } from './overcut.ts';
+import { overcutOf, overcutStep } from './overcut.ts';
 import { checkUncutSides, cutCorners } from './takeoff/opening.ts';
 import type { CornerTreatment, OpeningSide } from './types.ts';
 import { arithmetic, put, type WorkingStep } from './working.ts';
@@ -62,14 +62,7 @@ export function cornerChoices(input: {
       { corners: 'square', ...none, squareFinishFt: runPastFt },
     ],
     working: [
-      {
-        label: 'Overcut at one cut end',
-        formula: '√(2R(T + e) − (T + e)²) − √(2Re − e²), R = Ø ÷ 2',
-        inputs: [put('Ø', bladeDiameterIn, 'in'), put('T', thicknessIn, 'in'), put('e', passThroughIn, 'in')],
-        value: overcutIn,
-        unit: 'in',
-        source: arithmetic,
-      },
+      overcutStep({ bladeDiameterIn, thicknessIn, passThroughIn }),
       {
         label: 'Run past, or left to finish square',
         formula: 'overcut × cut ends × count ÷ 12',

@@ -5,7 +5,7 @@ import { levelAtDistanceDba } from './exposure/noise.ts';
 import { inchFeet } from './inch-feet.ts';
 import { sawsForWindow } from './joints.ts';
 import { lipTreatment } from './lip.ts';
-import { cornerCoreDiameterIn, overcutIn } from './overcut.ts';
+import { cornerCoreDiameterIn, overcutIn, overcutStep } from './overcut.ts';
 import { batteryPacks, generatorKw } from './power.ts';
 import { conduitOutsideDiameters } from './tables/conduit.ts';
 import { minimumCover } from './tables/cover.ts';
@@ -15,195 +15,183 @@ import { reinforcedConcretePcf, reinforcedConcreteSource } from './tables/unit-w
 import { coreWeightLb, slabWeightLb } from './weights.ts';
 import { arithmetic, put, type WorkingInput, type WorkingSource, type WorkingStep } from './working.ts';
 
-type Input<Calculate extends (input: never) => unknown> = Parameters<Calculate>[0];
+/** All of a step but its value; arithmetic unless it names another source. */
+interface StepWords {
+  readonly label: string;
+  readonly formula: string;
+  readonly inputs: readonly WorkingInput[];
+  readonly unit: string;
+  readonly source?: WorkingSource;
+}
 
-const concreteSource = sourceOf(reinforcedConcreteSource);
+/** Calculates first, so that bad input throws what the function throws, and then puts it in words. */
+function explained<Input>(
+  calculate: (input: Input) => number | string,
+  describe: (input: Input) => StepWords,
+): (input: Input) => WorkingStep {
+  return (input) => {
+    const value = calculate(input);
+    return { source: arithmetic, ...describe(input), value };
+  };
+}
 
 /**
  * The working of the functions that return a bare number or date, under the same names: one step each, so that a
- * screen can open those figures too. Each calculates by its function and throws what it throws.
+ * screen can open those figures too.
  */
 export const explain = {
-  inchFeet: (input: Input<typeof inchFeet>): WorkingStep =>
-    step('Inch-feet', 'L × D', [put('L', input.lengthFt, 'ft'), put('D', input.depthIn, 'in')], {
-      value: inchFeet(input),
-      unit: 'in-ft',
+  inchFeet: explained(inchFeet, ({ lengthFt, depthIn }) => ({
+    label: 'Inch-feet',
+    formula: 'L × D',
+    inputs: [put('L', lengthFt, 'ft'), put('D', depthIn, 'in')],
+    unit: 'in-ft',
+  })),
+
+  overcutIn: explained(overcutIn, (input) => overcutStep(input)),
+
+  cornerCoreDiameterIn: explained(cornerCoreDiameterIn, (input) => ({
+    label: 'Corner core',
+    formula: 'inside the corner 2 × overcut; centred on it 1 ×',
+    inputs: [put('overcut', input.overcutIn, 'in'), put('placement', input.placement ?? 'inside', '')],
+    unit: 'in',
+  })),
+
+  coreWeightLb: explained(coreWeightLb, ({ diameterIn, lengthIn, densityPcf }) => ({
+    label: 'Weight of the core',
+    formula: 'π ÷ 4 × Ø² × L ÷ 1,728 × density',
+    inputs: [put('Ø', diameterIn, 'in'), put('L', lengthIn, 'in'), density(densityPcf)],
+    unit: 'lb',
+    source: densitySource(densityPcf),
+  })),
+
+  slabWeightLb: explained(slabWeightLb, ({ lengthFt, widthFt, thicknessIn, densityPcf }) => ({
+    label: 'Weight of the slab',
+    formula: 'L × W × T ÷ 12 × density',
+    inputs: [
+      put('L', lengthFt, 'ft'),
+      put('W', widthFt, 'ft'),
+      put('T', thicknessIn, 'in'),
+      density(densityPcf),
+    ],
+    unit: 'lb',
+    source: densitySource(densityPcf),
+  })),
+
+  bladeReachIn: explained(
+    (input: Parameters<typeof bladeReachWithSource>[0]) => bladeReachWithSource(input).reachIn,
+    (input) => ({
+      label: 'Reach of the blade',
+      formula: 'table, by diameter and mount',
+      inputs: [put('Ø', input.diameterIn, 'in'), put('mount', input.mount, '')],
+      unit: 'in',
+      source: bladeReachWithSource(input).source,
     }),
+  ),
 
-  overcutIn: (input: Input<typeof overcutIn>): WorkingStep =>
-    step(
-      'Overcut at one cut end',
-      '√(2R(T + e) − (T + e)²) − √(2Re − e²), R = Ø ÷ 2',
-      [
-        put('Ø', input.bladeDiameterIn, 'in'),
-        put('T', input.thicknessIn, 'in'),
-        put('e', input.passThroughIn, 'in'),
-      ],
-      { value: overcutIn(input), unit: 'in' },
-    ),
+  surfaceSpeedSfm: explained(surfaceSpeedSfm, ({ diameterIn, rpm }) => ({
+    label: 'Rim speed',
+    formula: 'π × Ø × rpm ÷ 12',
+    inputs: [put('Ø', diameterIn, 'in'), put('rpm', rpm, 'rpm')],
+    unit: 'SFM',
+  })),
 
-  cornerCoreDiameterIn: (input: Input<typeof cornerCoreDiameterIn>): WorkingStep =>
-    step(
-      'Corner core',
-      'inside the corner 2 × overcut; centred on it 1 ×',
-      [put('overcut', input.overcutIn, 'in'), put('placement', input.placement ?? 'inside', '')],
-      { value: cornerCoreDiameterIn(input), unit: 'in' },
-    ),
+  rpmForSurfaceSpeed: explained(rpmForSurfaceSpeed, ({ diameterIn, sfm }) => ({
+    label: 'Turns for a rim speed',
+    formula: '12 × SFM ÷ (π × Ø)',
+    inputs: [put('Ø', diameterIn, 'in'), put('SFM', sfm, 'SFM')],
+    unit: 'rpm',
+  })),
 
-  coreWeightLb: (input: Input<typeof coreWeightLb>): WorkingStep =>
-    step(
-      'Weight of the core',
-      'π ÷ 4 × Ø² × L ÷ 1,728 × density',
-      [put('Ø', input.diameterIn, 'in'), put('L', input.lengthIn, 'in'), density(input.densityPcf)],
-      { value: coreWeightLb(input), unit: 'lb' },
-      input.densityPcf === undefined ? concreteSource : arithmetic,
-    ),
+  levelAtDistanceDba: explained(levelAtDistanceDba, ({ levelDba, referenceFt, distanceFt }) => ({
+    label: 'Level at a distance',
+    formula: 'L − 20 × log10(D ÷ reference)',
+    inputs: [put('L', levelDba, 'dBA'), put('D', distanceFt, 'ft'), put('reference', referenceFt, 'ft')],
+    unit: 'dBA',
+  })),
 
-  slabWeightLb: (input: Input<typeof slabWeightLb>): WorkingStep =>
-    step(
-      'Weight of the slab',
-      'L × W × T ÷ 12 × density',
-      [
-        put('L', input.lengthFt, 'ft'),
-        put('W', input.widthFt, 'ft'),
-        put('T', input.thicknessIn, 'in'),
-        density(input.densityPcf),
-      ],
-      { value: slabWeightLb(input), unit: 'lb' },
-      input.densityPcf === undefined ? concreteSource : arithmetic,
-    ),
+  minimumCoverIn: explained(minimumCoverIn, ({ location, wiring, inRaceway = false }) => ({
+    label: 'Cover',
+    formula: 'table, by location and wiring',
+    inputs: [
+      put('location', location, ''),
+      put('wiring', wiring, ''),
+      put('in a raceway', inRaceway ? 'yes' : 'no', ''),
+    ],
+    unit: 'in',
+    source: sourceOf(minimumCover.source),
+  })),
 
-  bladeReachIn: (input: Input<typeof bladeReachWithSource>): WorkingStep => {
-    const { reachIn, source } = bladeReachWithSource(input);
-    return step(
-      'Reach of the blade',
-      'table, by diameter and mount',
-      [put('Ø', input.diameterIn, 'in'), put('mount', input.mount, '')],
-      { value: reachIn, unit: 'in' },
-      source,
-    );
-  },
+  conduitOutsideDiameterIn: explained(conduitOutsideDiameterIn, ({ kind, tradeSize }) => ({
+    label: 'Conduit outside diameter',
+    formula: 'table, by kind and trade size',
+    inputs: [put('kind', kind, ''), put('trade size', tradeSize, 'in')],
+    unit: 'in',
+    source: sourceOf(conduitOutsideDiameters[kind].source),
+  })),
 
-  surfaceSpeedSfm: (input: Input<typeof surfaceSpeedSfm>): WorkingStep =>
-    step('Rim speed', 'π × Ø × rpm ÷ 12', [put('Ø', input.diameterIn, 'in'), put('rpm', input.rpm, 'rpm')], {
-      value: surfaceSpeedSfm(input),
-      unit: 'SFM',
-    }),
+  sawsForWindow: explained(sawsForWindow, ({ sawFt, feetPerHour, windowHours }) => ({
+    label: 'Saws for the window',
+    formula: '⌈feet ÷ (feet an hour × hours)⌉',
+    inputs: [
+      put('feet', sawFt, 'ft'),
+      put('feet an hour', feetPerHour, 'ft/h'),
+      put('hours', windowHours, 'h'),
+    ],
+    unit: 'saws',
+  })),
 
-  rpmForSurfaceSpeed: (input: Input<typeof rpmForSurfaceSpeed>): WorkingStep =>
-    step(
-      'Turns for a rim speed',
-      '12 × SFM ÷ (π × Ø)',
-      [put('Ø', input.diameterIn, 'in'), put('SFM', input.sfm, 'SFM')],
-      { value: rpmForSurfaceSpeed(input), unit: 'rpm' },
-    ),
-
-  levelAtDistanceDba: (input: Input<typeof levelAtDistanceDba>): WorkingStep =>
-    step(
-      'Level at a distance',
-      'L − 20 × log10(D ÷ reference)',
-      [
-        put('L', input.levelDba, 'dBA'),
-        put('D', input.distanceFt, 'ft'),
-        put('reference', input.referenceFt, 'ft'),
-      ],
-      { value: levelAtDistanceDba(input), unit: 'dBA' },
-    ),
-
-  minimumCoverIn: (input: Input<typeof minimumCoverIn>): WorkingStep =>
-    step(
-      'Cover',
-      'table, by location and wiring',
-      [
-        put('location', input.location, ''),
-        put('wiring', input.wiring, ''),
-        put('in a raceway', input.inRaceway === true ? 'yes' : 'no', ''),
-      ],
-      { value: minimumCoverIn(input), unit: 'in' },
-      sourceOf(minimumCover.source),
-    ),
-
-  conduitOutsideDiameterIn: (input: Input<typeof conduitOutsideDiameterIn>): WorkingStep => {
-    const value = conduitOutsideDiameterIn(input);
-    return step(
-      'Conduit outside diameter',
-      'table, by kind and trade size',
-      [put('kind', input.kind, ''), put('trade size', input.tradeSize, 'in')],
-      { value, unit: 'in' },
-      sourceOf(conduitOutsideDiameters[input.kind].source),
-    );
-  },
-
-  sawsForWindow: (input: Input<typeof sawsForWindow>): WorkingStep =>
-    step(
-      'Saws for the window',
-      '⌈feet ÷ (feet an hour × hours)⌉',
-      [
-        put('feet', input.sawFt, 'ft'),
-        put('feet an hour', input.feetPerHour, 'ft/h'),
-        put('hours', input.windowHours, 'h'),
-      ],
-      { value: sawsForWindow(input), unit: 'saws' },
-    ),
-
-  lipTreatment: (input: Input<typeof lipTreatment>): WorkingStep => {
-    const { treatment, cutLengthIn } = lipTreatment(input);
-    return step(
-      'Length of the cut',
-      'none to ¼ in; to ½ in a bevel, 2 × height; above a ramp, run × height',
-      [
+  lipTreatment: explained(
+    (input: Parameters<typeof lipTreatment>[0]) => lipTreatment(input).cutLengthIn,
+    (input) => ({
+      label: 'Length of the cut',
+      formula: 'none to ¼ in; to ½ in a bevel, 2 × height; above a ramp, run × height',
+      inputs: [
         put('height', input.heightIn, 'in'),
         put('run', input.runPerRise ?? lipRules.rows.rampRunPerRise, 'to 1'),
-        put('treatment', treatment, ''),
+        put('treatment', lipTreatment(input).treatment, ''),
       ],
-      { value: cutLengthIn, unit: 'in' },
-      sourceOf(lipRules.source),
-    );
-  },
+      unit: 'in',
+      source: sourceOf(lipRules.source),
+    }),
+  ),
 
-  batteryPacks: (input: Input<typeof batteryPacks>): WorkingStep => {
-    const value = batteryPacks(input);
-    const inputs =
+  batteryPacks: explained(batteryPacks, (input) => ({
+    label: 'Battery packs',
+    formula: '⌈work ÷ work per pack⌉',
+    inputs:
       'units' in input
         ? [put('work', input.units, 'units'), put('work per pack', input.unitsPerPack, 'units')]
-        : [put('work', input.inchFeet, 'in-ft'), put('work per pack', input.inchFeetPerPack, 'in-ft')];
-    return step('Battery packs', '⌈work ÷ work per pack⌉', inputs, { value, unit: 'packs' });
-  },
+        : [put('work', input.inchFeet, 'in-ft'), put('work per pack', input.inchFeetPerPack, 'in-ft')],
+    unit: 'packs',
+  })),
 
-  generatorKw: (input: Input<typeof generatorKw>): WorkingStep =>
-    step(
-      'Generator',
+  generatorKw: explained(generatorKw, (input) => ({
+    label: 'Generator',
+    formula:
       'max(running ÷ load fraction, running × start factor); running = V × A (× √3) × power factor ÷ 1,000',
-      [
-        put('V', input.volts, 'V'),
-        put('A', input.amps, 'A'),
-        put('phases', input.phases, ''),
-        put('power factor', input.powerFactor ?? 1, ''),
-        put('load fraction', input.loadFraction ?? 0.8, ''),
-        put('start factor', input.startFactor ?? 1, ''),
-      ],
-      { value: generatorKw(input), unit: 'kW' },
-    ),
+    inputs: [
+      put('V', input.volts, 'V'),
+      put('A', input.amps, 'A'),
+      put('phases', input.phases, ''),
+      put('power factor', input.powerFactor ?? 1, ''),
+      put('load fraction', input.loadFraction ?? 0.8, ''),
+      put('start factor', input.startFactor ?? 1, ''),
+    ],
+    unit: 'kW',
+  })),
 
-  earliestDigDate: (input: Input<typeof earliestDigDate>): WorkingStep =>
-    step(
-      'Earliest date to dig',
-      'the day after the last full business day; the day of notice is not counted',
-      [put('notice', input.notifiedOn, ''), put('full business days', input.fullBusinessDays, 'days')],
-      { value: earliestDigDate(input), unit: '' },
-    ),
+  earliestDigDate: explained(earliestDigDate, ({ notifiedOn, fullBusinessDays }) => ({
+    label: 'Earliest date to dig',
+    formula: 'the day after the last full business day; the day of notice is not counted',
+    inputs: [put('notice', notifiedOn, ''), put('full business days', fullBusinessDays, 'days')],
+    unit: '',
+  })),
 } as const;
 
 function density(densityPcf: number | undefined): WorkingInput {
   return put('density', densityPcf ?? reinforcedConcretePcf, 'pcf');
 }
 
-function step(
-  label: string,
-  formula: string,
-  inputs: readonly WorkingInput[],
-  result: { readonly value: number | string; readonly unit: string },
-  source: WorkingSource = arithmetic,
-): WorkingStep {
-  return { label, formula, inputs, ...result, source };
+function densitySource(densityPcf: number | undefined): WorkingSource {
+  return densityPcf === undefined ? sourceOf(reinforcedConcreteSource) : arithmetic;
 }

@@ -49,3 +49,16 @@ export * from './crew-hours.ts';
 export * from './pricing.ts';
 export * from './tabulation.ts';
 export { explain } from './explain.ts';
+
+export { cutSketch, sketchNote, type CutSketch, type SketchedCut } from './drawing/cut-sketch.ts';
+export { describeCut, describeTakeoff } from './drawing/cut-words.ts';
+export * from './drawing/depth-section.ts';
+export type {
+  Box,
+  CircleRole,
+  CutShape,
+  LineRole,
+  Point,
+  SketchCircle,
+  SketchLine,
+} from './drawing/geometry.ts';

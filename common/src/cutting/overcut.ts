@@ -1,5 +1,6 @@
 import { checkChoice, checkNumber, checkObject } from './check.ts';
 import { CuttingInputError } from './input-error.ts';
+import { arithmetic, put, type WorkingStep } from './working.ts';
 import { bladeDiameterInRange, passThroughInRange, thicknessInRange } from './limits.ts';
 
 export interface OvercutInput {
@@ -36,6 +37,18 @@ export function overcutOf({ bladeDiameterIn, thicknessIn, passThroughIn }: Overc
   }
   const halfChord = (depthIn: number) => Math.sqrt(depthIn * (bladeDiameterIn - depthIn));
   return halfChord(plungeIn) - halfChord(passThroughIn);
+}
+
+/** The working of one overcut, for numbers already checked. */
+export function overcutStep({ bladeDiameterIn, thicknessIn, passThroughIn }: OvercutInput): WorkingStep {
+  return {
+    label: 'Overcut at one cut end',
+    formula: '√(2R(T + e) − (T + e)²) − √(2Re − e²), R = Ø ÷ 2',
+    inputs: [put('Ø', bladeDiameterIn, 'in'), put('T', thicknessIn, 'in'), put('e', passThroughIn, 'in')],
+    value: overcutOf({ bladeDiameterIn, thicknessIn, passThroughIn }),
+    unit: 'in',
+    source: arithmetic,
+  };
 }
 
 export const corePlacements = ['inside', 'centred'] as const;

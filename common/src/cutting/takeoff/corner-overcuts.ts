@@ -1,4 +1,4 @@
-import { overcutOf } from '../overcut.ts';
+import { overcutOf, overcutStep } from '../overcut.ts';
 import { bladeMounts, bladeReach } from '../tables/blade-reach.ts';
 import { arithmetic, put, type WorkingStep } from '../working.ts';
 
@@ -36,16 +36,7 @@ export function cornerOvercut(cut: {
   return {
     overcutIn,
     cautions: isPastReach ? [overReachCaution] : [],
-    working: [
-      {
-        label: 'Overcut at one cut end',
-        formula: '√(2R(T + e) − (T + e)²) − √(2Re − e²), R = Ø ÷ 2',
-        inputs: [put('Ø', bladeDiameterIn, 'in'), put('T', thicknessIn, 'in'), put('e', passThroughIn, 'in')],
-        value: overcutIn,
-        unit: 'in',
-        source: arithmetic,
-      },
-    ],
+    working: [overcutStep({ bladeDiameterIn, thicknessIn, passThroughIn })],
   };
 }
 
