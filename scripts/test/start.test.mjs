@@ -42,7 +42,8 @@ const miniature = {
   'server/package.json': JSON.stringify({
     name: 'server',
     version: '0.0.0',
-    scripts: { build: 'mkdir -p dist && cp src/*.js dist/ && cp -r fakes dist-fakes' },
+    type: 'module',
+    scripts: { build: 'mkdir -p dist dist-fakes && cp src/*.js dist/ && cp -r fakes/. dist-fakes' },
   }),
   'server/src/migrate.js': "console.log('migrated', new URL(process.env.DATABASE_OWNER_URL).username);",
   'server/src/seed.js': `
@@ -82,11 +83,6 @@ before(async () => {
     mkdirSync(dirname(join(checkout, path)), { recursive: true });
     writeFileSync(join(checkout, path), text);
   }
-  for (const path of ['server/fakes/package.json']) writeFileSync(join(checkout, path), '{"type":"module"}');
-  writeFileSync(
-    join(checkout, 'server/package.json'),
-    JSON.stringify({ ...JSON.parse(miniature['server/package.json']), type: 'module' }),
-  );
   const [app, stripe, mail, smtp, postgres] = await freePorts(5);
   env = {
     ...process.env,
