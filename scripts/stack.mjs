@@ -29,7 +29,7 @@ import { startControl } from './lib/stack-control.mjs';
 
 const usage = `node scripts/stack.mjs [--seed] [--no-app [--migrate]] [--mode test|demo|development]
   --seed     fill it with the demo
-  --no-app   database and stand-ins only; a stand-in that is not built is left out
+  --no-app   database and stand-ins only; a stand-in that does not start is left out
   --migrate  with --no-app: bring the schema up to date all the same
 Environment: PORT (the app's; else a free one), CLIENT_DIST.
 Prints one line of JSON when ready (and sends it to a parent process); stops and deletes everything on Ctrl-C.`;
@@ -130,7 +130,7 @@ async function main() {
   const standIns = startStandIns({
     context,
     started: (service) => shutdown.add(service.stop),
-    skipAbsent: !withApp,
+    whatWorks: !withApp,
   });
   const [urls, present] = await Promise.all([context.openDatabase(), standIns]);
   const env = serverEnvironment({

@@ -1,4 +1,3 @@
-import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import { mailEnvironment, stripeEnvironment } from './app-environment.mjs';
 import { run } from './commands.mjs';
@@ -24,31 +23,30 @@ export function runProgram(program, { args = [], env, logFile, onLine }) {
 }
 
 /**
- * Starts the stand-ins for the payment provider and the mail server and waits until both listen. With `skipAbsent` one
- * that is not built is left out. Returns the services; hands each to `started` at once, so that it is stopped even when
- * the other one fails.
+ * Starts the stand-ins for the payment provider and the mail server and waits until both listen. With `whatWorks` one
+ * that is not built or does not start is left out. Resolves to the names of those that run; hands each service to
+ * `started` at once, so that it is stopped even when the other one fails.
  */
-export async function startStandIns({ context, started, skipAbsent = false }) {
+export async function startStandIns({ context, started, whatWorks = false }) {
   const { ports, places } = context;
   const wanted = [
     { name: 'stripe', env: stripeEnvironment(context), listens: [ports.stripe] },
     { name: 'mail', env: mailEnvironment(context), listens: [ports.smtp, ports.mailWeb] },
   ];
-  const present = wanted.filter(({ name }) => !skipAbsent || existsSync(programs[name]));
-  await Promise.all(
-    present.map(async ({ name, env, listens }) => {
-      const service = startService({
-        name,
-        program: programs[name],
-        env,
-        logs: places.logs,
-        run: places.run,
-      });
-      started(service);
-      for (const port of listens) await waitForPort(service, port);
-    }),
+  const start = async ({ name, env, listens }) => {
+    const service = startService({ name, program: programs[name], env, logs: places.logs, run: places.run });
+    started(service);
+    for (const port of listens) await waitForPort(service, port);
+    return name;
+  };
+  const leaveOut = (error) => {
+    console.error(`Left out: ${error.message}`);
+    return null;
+  };
+  const running = await Promise.all(
+    wanted.map((standIn) => (whatWorks ? start(standIn).catch(leaveOut) : start(standIn))),
   );
-  return present.map(({ name }) => name);
+  return running.filter(Boolean);
 }
 
 /** Starts the server and waits until it answers. */
