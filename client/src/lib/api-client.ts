@@ -99,8 +99,9 @@ export function refreshSession(since: number = Date.now(), original?: ApiError):
 
 function locked<T>(work: () => Promise<T>): Promise<T> {
   // Not every browser mode offers web locks (they need a secure context); the server's grace period covers the rest.
-  if (typeof navigator === 'undefined' || navigator.locks === undefined) return work();
-  return navigator.locks.request('kerfyard.refresh', work) as Promise<T>;
+  const { locks } = navigator as { locks?: LockManager | null };
+  if (locks === undefined || locks === null) return work();
+  return locks.request('kerfyard.refresh', work) as Promise<T>;
 }
 
 async function send<T>(method: Method, path: string, body: unknown, options: RequestOptions): Promise<T> {

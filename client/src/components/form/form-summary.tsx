@@ -18,7 +18,7 @@ export function FormSummary(props: {
   const { t } = useTranslation();
   const empty = props.what === undefined && props.lines.length === 0;
   return (
-    <div role="alert" className={empty ? undefined : styles.summary}>
+    <div role="alert" className={empty ? 'k-hidden' : styles.summary}>
       {!empty && (
         <Text as="p" weight="medium">
           {props.what ?? t('form.wrong', { count: props.lines.length })}

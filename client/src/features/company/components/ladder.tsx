@@ -3,6 +3,7 @@ import { Heading } from '@radix-ui/themes';
 import { useTranslation } from 'react-i18next';
 import { StatusWord } from '../../../components/status-word.tsx';
 import styles from './company.module.css';
+import { useMissingWords } from '../hooks/use-missing-words.ts';
 
 const steps: Record<OwnCompanyView['kind'], readonly LadderStep[]> = {
   cutting_contractor: ['look', 'bid', 'be_paid'],
@@ -12,6 +13,7 @@ const steps: Record<OwnCompanyView['kind'], readonly LadderStep[]> = {
 /** What the company may do already, and what each further step still needs: asked for only when it is needed. */
 export function Ladder({ company }: { company: OwnCompanyView }) {
   const { t } = useTranslation('company');
+  const words = useMissingWords();
   return (
     <section aria-labelledby="ladder" className="k-panel">
       <Heading as="h2" size="4" weight="medium" mb="3" id="ladder">
@@ -28,7 +30,7 @@ export function Ladder({ company }: { company: OwnCompanyView }) {
               {missing.length > 0 && (
                 <ul className={styles.missing}>
                   {missing.map((item) => (
-                    <li key={item}>{t(`missing.${item}`, { defaultValue: item })}</li>
+                    <li key={item}>{words(item)}</li>
                   ))}
                 </ul>
               )}

@@ -6,6 +6,7 @@ import { useErrorWords } from '../../../lib/error-words.ts';
 import { useFormId } from '../../../lib/use-form-id.ts';
 import { useStartPayouts } from '../api/company.queries.ts';
 import styles from './company.module.css';
+import { useMissingWords } from '../hooks/use-missing-words.ts';
 
 const tones: Record<OwnCompanyView['payouts']['state'], StatusTone> = {
   not_started: 'quiet',
@@ -17,6 +18,7 @@ const tones: Record<OwnCompanyView['payouts']['state'], StatusTone> = {
 export function Payouts({ payouts, canStart }: { payouts: OwnCompanyView['payouts']; canStart: boolean }) {
   const { t } = useTranslation('company');
   const words = useErrorWords();
+  const missingWords = useMissingWords();
   const { id, renew } = useFormId();
   const start = useStartPayouts();
   const go = () => start.mutate(id, { onError: renew });
@@ -34,7 +36,7 @@ export function Payouts({ payouts, canStart }: { payouts: OwnCompanyView['payout
       {payouts.missing.length > 0 && (
         <ul className={styles.missing}>
           {payouts.missing.map((item) => (
-            <li key={item}>{t(`missing.${item}`, { defaultValue: item })}</li>
+            <li key={item}>{missingWords(item)}</li>
           ))}
         </ul>
       )}
