@@ -165,6 +165,14 @@ export const work: Migration = {
       seq bigint NOT NULL,
       PRIMARY KEY (thread_id, user_id)
     );
+
+    -- One waiting e-mail about unseen messages per person, and when the last one went.
+    CREATE TABLE message_notice (
+      user_id uuid PRIMARY KEY REFERENCES app_user (id),
+      due_at timestamptz(3),
+      mailed_at timestamptz(3),
+      mail_id uuid
+    );
   `,
-  down: `DROP TABLE thread_read, message_file, message, thread, completion_photo, completion_line, completion, visit_line, visit, truck, crew, signature, sov_line, subcontract CASCADE;`,
+  down: `DROP TABLE message_notice, thread_read, message_file, message, thread, completion_photo, completion_line, completion, visit_line, visit, truck, crew, signature, sov_line, subcontract CASCADE;`,
 };

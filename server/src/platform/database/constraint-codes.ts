@@ -10,6 +10,7 @@ const codes: Record<string, ErrorCode> = {
   release_completion_id_key: 'already_released',
   completion_line_once: 'illegal_move',
   signature_pkey: 'illegal_move',
+  message_pkey: 'key_reused',
   ledger_no_overdraft: 'illegal_move',
 };
 

@@ -1,0 +1,31 @@
+import { Global, Module, type OnModuleInit } from '@nestjs/common';
+import { FileAccess } from '../files/file-access.ts';
+import { UnitOfWork } from '../platform/database/unit-of-work.ts';
+import { MessageWaiting } from './message-waiting.ts';
+import { OpenThread } from './open-thread.ts';
+import { PostMessage } from './post-message.ts';
+import { ReadThreads } from './read-threads.ts';
+import { TalkController } from './talk.controller.ts';
+import { FILE_IN_OWN_THREAD } from './talk.queries.ts';
+import { ThreadAccess } from './thread-access.ts';
+
+/** Threads between a general contractor and one crew. Global: the award joins them, the shell shows what is unread. */
+@Global()
+@Module({
+  controllers: [TalkController],
+  providers: [ThreadAccess, ReadThreads, PostMessage, OpenThread, MessageWaiting],
+  exports: [ReadThreads, OpenThread],
+})
+export class TalkModule implements OnModuleInit {
+  constructor(
+    private readonly uow: UnitOfWork,
+    private readonly fileAccess: FileAccess,
+  ) {}
+
+  onModuleInit(): void {
+    this.fileAccess.register(async (actor, fileId) => {
+      if (actor.company === null) return false;
+      return (await this.uow.row(null, FILE_IN_OWN_THREAD, [fileId, actor.company.id])) !== null;
+    });
+  }
+}

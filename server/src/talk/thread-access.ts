@@ -1,0 +1,35 @@
+import { Injectable } from '@nestjs/common';
+import type { Actor } from '@kerfyard/common/people';
+import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
+import { AppError } from '../platform/http/app-error.ts';
+import { LOCK_THREAD, THREAD_SIDES } from './talk.queries.ts';
+
+export interface ThreadRow {
+  id: string;
+  scope_id: string;
+  gc_company_id: string;
+  crew_company_id: string;
+  seq: string;
+}
+
+/** A thread belongs to its two companies and to nobody else. */
+@Injectable()
+export class ThreadAccess {
+  constructor(private readonly uow: UnitOfWork) {}
+
+  /** @throws AppError 404 for unknown and foreign ids alike */
+  async demand(tx: Tx | null, actor: Actor, threadId: string): Promise<ThreadRow> {
+    return this.find(tx, THREAD_SIDES, actor, threadId);
+  }
+
+  /** The same under the row's lock: what gives out sequence numbers. */
+  async lock(tx: Tx, actor: Actor, threadId: string): Promise<ThreadRow> {
+    return this.find(tx, LOCK_THREAD, actor, threadId);
+  }
+
+  private async find(tx: Tx | null, sql: string, actor: Actor, threadId: string): Promise<ThreadRow> {
+    const row = await this.uow.row<ThreadRow>(tx, sql, [threadId, actor.company?.id ?? null]);
+    if (row === null) throw new AppError('not_found');
+    return row;
+  }
+}
