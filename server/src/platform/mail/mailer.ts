@@ -10,6 +10,8 @@ import { frameMail } from './frame-mail.ts';
 import type { MailBuilder } from './mail-content.ts';
 import { PEOPLE_OF_COMPANY, PERSON } from './mail.queries.ts';
 
+export type { MailBuilder, MailContent } from './mail-content.ts';
+
 interface PersonRow {
   id: string;
   email: string;

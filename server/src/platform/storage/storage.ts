@@ -4,6 +4,7 @@ import { constants } from 'node:fs';
 import { mkdir, open, readdir, rename, rm, stat, type FileHandle } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import type { Readable } from 'node:stream';
+import { Clock } from '../clock/clock.ts';
 import { CONFIG, type Config } from '../config/config.ts';
 import { storageKey } from './storage-key.ts';
 
@@ -18,7 +19,10 @@ const STALE_MS = 60 * 60 * 1000;
 export class Storage implements OnModuleInit {
   private readonly root: string;
 
-  constructor(@Inject(CONFIG) config: Config) {
+  constructor(
+    @Inject(CONFIG) config: Config,
+    private readonly clock: Clock,
+  ) {
     this.root = config.filesDir;
   }
 
@@ -91,7 +95,7 @@ export class Storage implements OnModuleInit {
     for (const name of await readdir(folder)) {
       const path = join(folder, name);
       const found = await stat(path).catch(() => null);
-      if (found !== null && Date.now() - found.mtimeMs > STALE_MS) await rm(path, { force: true });
+      if (found !== null && this.clock.wallMs() - found.mtimeMs > STALE_MS) await rm(path, { force: true });
     }
   }
 }
