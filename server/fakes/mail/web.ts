@@ -1,6 +1,6 @@
 import { createServer } from 'node:http';
 import type { IncomingMessage, Server, ServerResponse } from 'node:http';
-import { seeOther, sendJson, sendPage, sendStyle } from '../shared/http.ts';
+import { isFromAnotherSite, seeOther, sendJson, sendPage, sendStyle } from '../shared/http.ts';
 import type { MailStore, StoredMessage } from './mail-store.ts';
 import { listPage, messagePage, missingPage } from './pages.ts';
 import { MAIL_STYLE } from './style.ts';
@@ -76,6 +76,7 @@ function serve(store: MailStore, request: IncomingMessage, response: ServerRespo
   const method = request.method ?? 'GET';
   const url = new URL(request.url ?? '/', 'http://localhost');
   request.resume();
+  if (isFromAnotherSite(request)) return sendJson(response, 403, { error: 'not from another site' });
   if (url.pathname.startsWith('/api/')) return serveApi(store, method, url, response);
   if (url.pathname === '/style.css') return sendStyle(response, MAIL_STYLE);
   if (url.pathname === '/') {

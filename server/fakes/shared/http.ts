@@ -49,7 +49,7 @@ const PAGE_HEADERS = {
   'Content-Type': 'text/html; charset=utf-8',
   'Cache-Control': 'no-store',
   'X-Content-Type-Options': 'nosniff',
-  'Referrer-Policy': 'no-referrer',
+  'Referrer-Policy': 'same-origin',
 };
 
 /**
@@ -67,6 +67,11 @@ export function sendPage(
     'Content-Security-Policy': `default-src 'none'; style-src 'self'; img-src 'self' data:; frame-src 'self'; frame-ancestors 'self'; base-uri 'none'; form-action ${formAction}`,
   });
   response.end(`<!doctype html>\n${page.text}`);
+}
+
+/** Whether a browser sends this on behalf of another site: stand-ins take no orders from there. */
+export function isFromAnotherSite(request: IncomingMessage): boolean {
+  return request.method !== 'GET' && request.headers['sec-fetch-site'] === 'cross-site';
 }
 
 /** Sends JSON with a status. */
