@@ -1,6 +1,7 @@
 import { Injectable, type OnModuleInit } from '@nestjs/common';
 import { UnitOfWork } from '../platform/database/unit-of-work.ts';
-import { Mailer, type MailContent } from '../platform/mail/mailer.ts';
+import type { MailContent } from '../platform/mail/mail-content.ts';
+import { Mailer } from '../platform/mail/mailer.ts';
 import { FUNDING_FOR_MAIL, RELEASE_FOR_MAIL } from './money-mails.queries.ts';
 
 interface MoneyRow {

@@ -56,11 +56,12 @@ export const money: Migration = {
 
     CREATE FUNCTION ledger_entry_must_balance() RETURNS trigger LANGUAGE plpgsql AS $$
     DECLARE
-      entry uuid := CASE TG_TABLE_NAME WHEN 'ledger_entry' THEN NEW.id ELSE NEW.entry_id END;
+      entry uuid;
       lines integer;
       unbalanced integer;
       strangers integer;
     BEGIN
+      IF TG_TABLE_NAME = 'ledger_entry' THEN entry := NEW.id; ELSE entry := NEW.entry_id; END IF;
       SELECT count(*) INTO lines FROM ledger_posting WHERE entry_id = entry;
       IF lines < 2 THEN
         RAISE EXCEPTION 'entry % has % line(s); at least two are needed', entry, lines USING ERRCODE = '23514', CONSTRAINT = 'ledger_two_lines';
