@@ -1,5 +1,5 @@
 import { cutSketch, CuttingInputError, type Cut, type CutSketch as Sketch } from '@kerfyard/common/cutting';
-import { useId, useMemo, type ReactNode } from 'react';
+import { Fragment, useId, useMemo, type ReactNode } from 'react';
 import { useTranslation } from 'react-i18next';
 import styles from './cut-sketch.module.css';
 import { sketchPaths } from './sketch-paths.ts';
@@ -44,10 +44,16 @@ export function CutSketch({ cuts, look = 'full', cutCount = cuts.length, empty =
         </At>
         {look === 'full' &&
           sketch.cuts.map((cut) => (
-            <At key={cut.index} x={cut.box.x} y={cut.box.y} box={box} className={styles.number}>
-              {cut.index + 1}
-              {cut.count > 1 && <span className={styles.times}> × {cut.count}</span>}
-            </At>
+            <Fragment key={cut.index}>
+              <At x={cut.box.x} y={cut.box.y} box={box} className={styles.number}>
+                {cut.index + 1}
+              </At>
+              {cut.count > 1 && (
+                <At x={cut.box.x + cut.box.width} y={cut.box.y} box={box} className={styles.times}>
+                  × {cut.count}
+                </At>
+              )}
+            </Fragment>
           ))}
       </div>
       {look === 'full' && <figcaption className={styles.note}>{sketch.note}</figcaption>}
