@@ -9,7 +9,7 @@ const appendOnly = [
   'ledger_entry',
   'ledger_posting',
 ];
-const readOnly = ['app_clock', 'schema_migration'];
+const readOnly = ['app_clock', 'schema_migration', 'demo_person'];
 
 /** What the app's role may do; run after every migration. Nothing in a list here comes from outside. */
 export async function grantAppRole(ownerUrl: string): Promise<void> {

@@ -64,6 +64,13 @@ export const platform: Migration = {
     );
     CREATE INDEX membership_company ON membership (company_id);
 
+    -- Whom one press may sign in as, in demo and development mode; filled by the seeder and by nothing else.
+    CREATE TABLE demo_person (
+      key text PRIMARY KEY,
+      user_id uuid NOT NULL UNIQUE REFERENCES app_user (id),
+      position integer NOT NULL
+    );
+
     CREATE TABLE session (
       id uuid PRIMARY KEY,
       user_id uuid NOT NULL REFERENCES app_user (id),
@@ -161,7 +168,7 @@ export const platform: Migration = {
       FOR EACH STATEMENT EXECUTE FUNCTION refuse_change();
   `,
   down: `
-    DROP TABLE audit_event, file, idempotency_key, rate_limit, sign_up, session, membership, app_user, company, counter, app_clock CASCADE;
+    DROP TABLE audit_event, file, idempotency_key, rate_limit, sign_up, demo_person, session, membership, app_user, company, counter, app_clock CASCADE;
     DROP FUNCTION refuse_change, app_now;
   `,
 };

@@ -2,16 +2,27 @@ import { Global, Module } from '@nestjs/common';
 import { APP_GUARD } from '@nestjs/core';
 import { JwtModule } from '@nestjs/jwt';
 import { PassportModule } from '@nestjs/passport';
+import { ChangeLimitGuard } from '../limits/change-limit.guard.ts';
+import { RateLimits } from '../limits/rate-limits.ts';
 import { AccessGuard } from './access.guard.ts';
 import { AccessTokenStrategy } from './access-token.strategy.ts';
 import { AccessTokens } from './access-tokens.ts';
+import { Passwords } from './passwords.ts';
 import { Sessions } from './sessions.ts';
 
-/** Sessions, and the guard before every route. */
+/** Sessions, passwords, limits, and the guards before every route: access first, then how often. */
 @Global()
 @Module({
   imports: [PassportModule, JwtModule.register({})],
-  providers: [Sessions, AccessTokens, AccessTokenStrategy, { provide: APP_GUARD, useClass: AccessGuard }],
-  exports: [Sessions, AccessTokens],
+  providers: [
+    Sessions,
+    AccessTokens,
+    AccessTokenStrategy,
+    Passwords,
+    RateLimits,
+    { provide: APP_GUARD, useClass: AccessGuard },
+    { provide: APP_GUARD, useClass: ChangeLimitGuard },
+  ],
+  exports: [Sessions, AccessTokens, Passwords, RateLimits],
 })
 export class AuthModule {}

@@ -87,12 +87,7 @@ export class Sessions {
     token: RefreshToken,
     origin: Origin,
   ): Promise<SessionTokens | 'reused' | null> {
-    await this.uow.rows(tx, LOCK_SESSION, [token.sessionId]);
-    const session = await this.uow.row<SessionRow>(tx, SELECT_SESSION_STATE, [
-      token.sessionId,
-      GRACE_SECONDS,
-      IDLE_SECONDS,
-    ]);
+    const session = await this.state(tx, token.sessionId);
     if (session === null || !session.is_live) return null;
     if (hasHash(token, session.refresh_hash)) {
       // Replaced a moment ago: once per grace is enough, and the one before keeps leading to this one.
@@ -122,6 +117,31 @@ export class Sessions {
       detail: { because, userId: ended.user_id },
       origin,
     });
+  }
+
+  /**
+   * Ends the session of a refresh token that is really its own (the current or the one just replaced). Whether it did:
+   * then the caller closes its sockets after the commit.
+   */
+  async endHeldBy(tx: Tx, token: RefreshToken, because: string, origin: Origin): Promise<boolean> {
+    const session = await this.state(tx, token.sessionId);
+    if (session === null) return false;
+    if (!hasHash(token, session.refresh_hash) && !hasHash(token, session.previous_hash)) return false;
+    await this.end(tx, session.id, because, origin);
+    return true;
+  }
+
+  /** Ends the session that the browser holds, and its sockets. */
+  async signOut(cookie: string | null, origin: Origin): Promise<void> {
+    const token = parseRefreshToken(cookie);
+    if (token === null) return;
+    const isEnded = await this.uow.run((tx) => this.endHeldBy(tx, token, 'signed_out', origin));
+    if (isEnded) this.hints.endSession(token.sessionId);
+  }
+
+  private async state(tx: Tx, sessionId: string): Promise<SessionRow | null> {
+    await this.uow.rows(tx, LOCK_SESSION, [sessionId]);
+    return this.uow.row<SessionRow>(tx, SELECT_SESSION_STATE, [sessionId, GRACE_SECONDS, IDLE_SECONDS]);
   }
 
   /** Which of these sessions may no longer hold a socket open. */

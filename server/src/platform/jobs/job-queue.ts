@@ -47,7 +47,9 @@ export class JobQueue implements OnApplicationShutdown {
   ): Promise<void> {
     const db = {
       executeSql: async (text: string, values: unknown[]) => {
-        const [rows] = await this.sequelize.query(text, { bind: values, transaction: tx });
+        // The driver takes undefined for null; Sequelize takes it for a missing parameter.
+        const bind = values.map((value) => value ?? null);
+        const [rows] = await this.sequelize.query(text, { bind, transaction: tx });
         return { rows: rows as unknown[] };
       },
     };

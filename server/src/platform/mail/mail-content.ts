@@ -12,3 +12,6 @@ export interface MailContent {
  * `mailId` (the same for every try of one mail). Null: there is nothing to send any more.
  */
 export type MailBuilder = (data: Record<string, unknown>) => Promise<MailContent | null>;
+
+/** Whom to write to, by the id given at sending; null when there is nobody any more. */
+export type FindAddressee = (id: string) => Promise<{ name: string; email: string } | null>;

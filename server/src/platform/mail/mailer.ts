@@ -7,7 +7,7 @@ import { newId } from '../ids/ids.ts';
 import { JobQueue } from '../jobs/job-queue.ts';
 import type { Jobs } from '../jobs/queues.ts';
 import { frameMail } from './frame-mail.ts';
-import type { MailBuilder } from './mail-content.ts';
+import type { FindAddressee, MailBuilder } from './mail-content.ts';
 import { PEOPLE_OF_COMPANY, PERSON } from './mail.queries.ts';
 
 export type { MailBuilder, MailContent } from './mail-content.ts';
@@ -34,6 +34,7 @@ export type MailData = Record<string, unknown> & { [name in OwnData]?: never };
 @Injectable()
 export class Mailer implements OnApplicationBootstrap {
   private readonly builders = new Map<string, MailBuilder>();
+  private readonly addressees = new Map<string, FindAddressee>();
   private readonly transport;
 
   constructor(
@@ -55,10 +56,14 @@ export class Mailer implements OnApplicationBootstrap {
     await this.jobs.work('send_mail', (job) => this.send(job), 2);
   }
 
-  /** Say what a kind of e-mail reads like. Once per kind, when the feature's module starts. */
-  register(kind: string, build: MailBuilder): void {
+  /**
+   * Say what a kind of e-mail reads like. Once per kind, when the feature's module starts. With `addressee` the ids
+   * given to `toUsers` are not people's but things that know a name and address (a sign-up before its account).
+   */
+  register(kind: string, build: MailBuilder, addressee?: FindAddressee): void {
     if (this.builders.has(kind)) throw new Error(`two builders for the e-mail ${kind}`);
     this.builders.set(kind, build);
+    if (addressee !== undefined) this.addressees.set(kind, addressee);
   }
 
   /** One e-mail to each of these people, not before `startAfter` (wall time). */
@@ -91,7 +96,8 @@ export class Mailer implements OnApplicationBootstrap {
   private async send({ kind, to: userId, mailId, ...data }: Jobs['send_mail']): Promise<void> {
     const build = this.builders.get(kind);
     if (build === undefined) throw new Error(`no builder for the e-mail ${kind}`);
-    const person = await this.uow.row<PersonRow>(null, PERSON, [userId]);
+    const find = this.addressees.get(kind) ?? ((id) => this.uow.row<PersonRow>(null, PERSON, [id]));
+    const person = await find(userId);
     if (person === null) return;
     const content = await build({ ...data, userId, mailId });
     if (content === null) return;

@@ -1,0 +1,46 @@
+import { Inject, Injectable } from '@nestjs/common';
+import type { DemoPersonView } from '@kerfyard/common/people';
+import type { Origin } from '../platform/auth/access.decorators.ts';
+import type { SessionTokens } from '../platform/auth/cookies.ts';
+import { CONFIG, type Config } from '../platform/config/config.ts';
+import { UnitOfWork } from '../platform/database/unit-of-work.ts';
+import { AppError } from '../platform/http/app-error.ts';
+import { SignInService } from '../people/sign-in.ts';
+import { SELECT_DEMO_PEOPLE, SELECT_DEMO_PERSON, type DemoPersonRow } from './demo.queries.ts';
+
+/** The seeded people, whom anyone may be: in demo and development mode only. */
+@Injectable()
+export class DemoPeople {
+  constructor(
+    @Inject(CONFIG) private readonly config: Config,
+    private readonly uow: UnitOfWork,
+    private readonly signIns: SignInService,
+  ) {}
+
+  async list(): Promise<DemoPersonView[]> {
+    this.demandDemo();
+    const rows = await this.uow.rows<DemoPersonRow>(null, SELECT_DEMO_PEOPLE);
+    return rows.map(presentDemoPerson);
+  }
+
+  async signIn(key: string, refreshCookie: string | null, origin: Origin): Promise<SessionTokens> {
+    this.demandDemo();
+    const person = await this.uow.row<DemoPersonRow>(null, SELECT_DEMO_PERSON, [key]);
+    if (person === null) throw new AppError('not_found');
+    return this.signIns.open(person.user_id, refreshCookie, origin);
+  }
+
+  private demandDemo(): void {
+    if (this.config.mode !== 'demo' && this.config.mode !== 'development') throw new AppError('not_found');
+  }
+}
+
+function presentDemoPerson(row: DemoPersonRow): DemoPersonView {
+  return {
+    key: row.key,
+    name: row.name,
+    company: row.company,
+    kind: row.kind ?? 'staff',
+    role: row.role ?? 'staff',
+  };
+}

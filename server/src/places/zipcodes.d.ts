@@ -1,0 +1,13 @@
+/** The part of `zipcodes` (BSD licence; positions from GeoNames, CC BY 4.0) that we use. */
+declare module 'zipcodes' {
+  interface ZipRecord {
+    zip: string;
+    latitude: number;
+    longitude: number;
+    city: string;
+    state: string;
+    country: string;
+  }
+  const zipcodes: { lookup(zip: string): ZipRecord | undefined };
+  export default zipcodes;
+}
