@@ -22,6 +22,23 @@ export interface ApiListBody<Api> {
 type ApiOf<K extends Kind> = Kinds[K] extends { api: infer Api } ? Api : never;
 type WithApi<K extends Kind> = Kinds[K] & { api: ApiOf<K> };
 
+/** One page of things that are already at hand, in their order. */
+export function pageOfItems<Item extends { id: string }>(
+  items: readonly Item[],
+  request: ListRequest,
+  url: string,
+): ApiListBody<Item> {
+  let start = 0;
+  let end = items.length;
+  if (request.starting_after !== undefined)
+    start = indexOfCursor(items, request.starting_after, 'starting_after') + 1;
+  if (request.ending_before !== undefined) end = indexOfCursor(items, request.ending_before, 'ending_before');
+  const isBackwards = request.ending_before !== undefined;
+  const window = items.slice(start, end);
+  const page = isBackwards ? window.slice(-request.limit) : window.slice(0, request.limit);
+  return { object: 'list', data: page, has_more: window.length > page.length, url };
+}
+
 /** A list that is whole: everything in one page. */
 export function wholeList<Api>(url: string, data: Api[]): ApiListBody<Api> {
   return { object: 'list', data, has_more: false, url };
@@ -47,18 +64,6 @@ export function pageOf<K extends Kind>(
     const { created } = record.api as { created?: number };
     return isWithin(created ?? 0, request.created) && (matches?.(record) ?? true);
   });
-  let start = 0;
-  let end = all.length;
-  if (request.starting_after !== undefined)
-    start = indexOfCursor(all, request.starting_after, 'starting_after') + 1;
-  if (request.ending_before !== undefined) end = indexOfCursor(all, request.ending_before, 'ending_before');
-  const isBackwards = request.ending_before !== undefined;
-  const window = all.slice(start, end);
-  const page = isBackwards ? window.slice(-request.limit) : window.slice(0, request.limit);
-  return {
-    object: 'list',
-    data: page.map((record) => record.api),
-    has_more: window.length > page.length,
-    url,
-  };
+  const page = pageOfItems(all, request, url);
+  return { ...page, data: page.data.map((record) => record.api) };
 }

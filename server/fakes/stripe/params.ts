@@ -50,15 +50,18 @@ export function params<Shape extends z.core.$ZodLooseShape>(shape: Shape) {
   return z.strictObject({ expand: textList.optional(), ...shape });
 }
 
+const paging = {
+  limit: integer.pipe(z.number().min(1).max(100)).default(10),
+  starting_after: text.optional(),
+  ending_before: text.optional(),
+};
+
+/** Parameters of a list call: paging and nothing else. */
+export const pagingParams = params(paging);
+
 /** Parameters of a list call: paging, creation time and the filters named. */
 export function listParams<Shape extends z.core.$ZodLooseShape>(filters: Shape) {
-  return params({
-    limit: integer.pipe(z.number().min(1).max(100)).default(10),
-    starting_after: text.optional(),
-    ending_before: text.optional(),
-    created: range.optional(),
-    ...filters,
-  });
+  return params({ ...paging, created: range.optional(), ...filters });
 }
 
 /** Whether a time lies in a `created` filter. */

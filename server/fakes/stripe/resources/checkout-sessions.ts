@@ -2,8 +2,18 @@ import type { Stripe } from 'stripe';
 import { z } from 'zod';
 import { invalidRequest } from '../errors.ts';
 import { newId } from '../ids.ts';
-import { pageOf, wholeList } from '../lists.ts';
-import { cents, currency, integer, listParams, mergeMetadata, metadata, params, text } from '../params.ts';
+import { pageOf, pageOfItems } from '../lists.ts';
+import {
+  cents,
+  currency,
+  integer,
+  listParams,
+  mergeMetadata,
+  metadata,
+  pagingParams,
+  params,
+  text,
+} from '../params.ts';
 import type { Kinds } from '../records.ts';
 import { route } from '../router.ts';
 import { idOf } from '../work.ts';
@@ -255,10 +265,10 @@ export const checkoutSessionRoutes = [
   route(
     'GET /v1/checkout/sessions/:id/line_items',
     'Checkout.SessionListLineItemsParams',
-    listParams({}),
-    ({ work, owner, path }) => {
+    pagingParams,
+    ({ work, owner, path, params: wanted }) => {
       const session = requireSession(work, path['id']!, owner);
-      return wholeList(`/v1/checkout/sessions/${session.id}/line_items`, session.notes.lineItems);
+      return pageOfItems(session.notes.lineItems, wanted, `/v1/checkout/sessions/${session.id}/line_items`);
     },
   ),
   expire,

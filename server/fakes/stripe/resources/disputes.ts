@@ -102,7 +102,7 @@ export function openDispute(work: Work, chargeId: string, input: DisputeInput = 
       has_evidence: false,
       past_due: false,
       submission_count: 0,
-      submission_method: null as unknown as Stripe.Dispute.EvidenceDetails['submission_method'],
+      submission_method: 'not_submitted',
     },
     intended_submission_method: null,
     is_charge_refundable: isInquiry,

@@ -2,7 +2,7 @@ import type { Stripe } from 'stripe';
 import { balanceInsufficient, invalidRequest } from '../errors.ts';
 import { newId } from '../ids.ts';
 import { pageOf } from '../lists.ts';
-import { cents, listParams, mergeMetadata, metadata, params, text } from '../params.ts';
+import { cents, mergeMetadata, metadata, pagingParams, params, text } from '../params.ts';
 import type { Kinds } from '../records.ts';
 import { route } from '../router.ts';
 import { idOf } from '../work.ts';
@@ -115,7 +115,7 @@ export const transferReversalRoutes = [
   route(
     'GET /v1/transfers/:id/reversals',
     'TransferListReversalsParams',
-    listParams({}),
+    pagingParams,
     ({ work, owner, path, params: wanted }) => {
       const transfer = requireTransfer(work, path['id']!, owner);
       return pageOf(work, 'transfer_reversal', {

@@ -3,7 +3,7 @@ import { isLoopbackUrl } from '../config.ts';
 import type { SeededWebhook } from '../config.ts';
 import { newId, newSecret } from '../ids.ts';
 import { pageOf } from '../lists.ts';
-import { clearable, flag, listParams, mergeMetadata, metadata, params, text, textList } from '../params.ts';
+import { clearable, flag, mergeMetadata, metadata, pagingParams, params, text, textList } from '../params.ts';
 import { PLATFORM } from '../records.ts';
 import type { Kinds } from '../records.ts';
 import { route } from '../router.ts';
@@ -88,12 +88,8 @@ export const webhookEndpointRoutes = [
       return { ...endpoint.api, secret };
     },
   ),
-  route(
-    'GET /v1/webhook_endpoints',
-    'WebhookEndpointListParams',
-    listParams({}),
-    ({ work, params: wanted }) =>
-      pageOf(work, 'webhook_endpoint', { owner: PLATFORM, url: '/v1/webhook_endpoints', request: wanted }),
+  route('GET /v1/webhook_endpoints', 'WebhookEndpointListParams', pagingParams, ({ work, params: wanted }) =>
+    pageOf(work, 'webhook_endpoint', { owner: PLATFORM, url: '/v1/webhook_endpoints', request: wanted }),
   ),
   route(
     'GET /v1/webhook_endpoints/:id',
