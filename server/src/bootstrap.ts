@@ -9,6 +9,7 @@ import { demandJson } from './platform/http/body-types.ts';
 import { serveClient } from './platform/http/client-files.ts';
 import { fromHere } from './platform/http/from-here.ts';
 import { noStore, securityHeaders } from './platform/http/security-headers.ts';
+import { LiveAdapter } from './platform/realtime/live.adapter.ts';
 import { createLogger, NestLog, requestLog } from './platform/logging/logging.ts';
 
 /**
@@ -35,5 +36,6 @@ export async function bootstrap(config: Config): Promise<NestExpressApplication>
   app.use(demandJson);
   app.useBodyParser('json', { limit: JSON_LIMIT_BYTES, strict: true });
   app.use(limitBody);
+  app.useWebSocketAdapter(new LiveAdapter(app, config));
   return app;
 }

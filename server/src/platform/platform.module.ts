@@ -8,6 +8,7 @@ import { UnitOfWork } from './database/unit-of-work.ts';
 import { JobQueue } from './jobs/job-queue.ts';
 import { Sweeps } from './jobs/sweeps.ts';
 import { LiveHints } from './realtime/live-hints.ts';
+import { WatchAccess } from './realtime/watch-access.ts';
 import { createStripeClient, STRIPE } from './stripe/stripe-client.ts';
 
 const services = [
@@ -17,6 +18,7 @@ const services = [
   JobQueue,
   Sweeps,
   LiveHints,
+  WatchAccess,
   KeyVault,
   { provide: STRIPE, inject: [CONFIG], useFactory: createStripeClient },
 ];

@@ -1,7 +1,7 @@
 import type { NextFunction, Request, Response } from 'express';
 import type { Config } from '../config/config.ts';
 import { AppError } from './app-error.ts';
-import { allowedOrigins } from './origins.ts';
+import { allowedOrigins, isFromOurPages } from './origins.ts';
 import { isWebhookPath } from './webhook-paths.ts';
 
 const READS = new Set(['GET', 'HEAD', 'OPTIONS']);
@@ -17,9 +17,7 @@ export function fromHere(config: Config) {
       next();
       return;
     }
-    const origin = request.get('origin');
-    const isOurs =
-      origin === undefined ? request.get('sec-fetch-site') === 'same-origin' : origins.has(origin);
+    const isOurs = isFromOurPages(origins, request.headers);
     next(isOurs && request.get('x-kerfyard') === '1' ? undefined : new AppError('not_from_here'));
   };
 }

@@ -1,0 +1,5 @@
+import { Module } from '@nestjs/common';
+import { LiveGateway } from './live.gateway.ts';
+
+@Module({ providers: [LiveGateway] })
+export class LiveModule {}
