@@ -1,6 +1,7 @@
 import { Global, Module, type OnModuleInit } from '@nestjs/common';
 import { FileAccess } from '../files/file-access.ts';
 import { UnitOfWork } from '../platform/database/unit-of-work.ts';
+import { WatchAccess } from '../platform/realtime/watch-access.ts';
 import { MessageWaiting } from './message-waiting.ts';
 import { OpenThread } from './open-thread.ts';
 import { PostMessage } from './post-message.ts';
@@ -20,6 +21,8 @@ export class TalkModule implements OnModuleInit {
   constructor(
     private readonly uow: UnitOfWork,
     private readonly fileAccess: FileAccess,
+    private readonly watchAccess: WatchAccess,
+    private readonly access: ThreadAccess,
   ) {}
 
   onModuleInit(): void {
@@ -27,5 +30,6 @@ export class TalkModule implements OnModuleInit {
       if (actor.company === null) return false;
       return (await this.uow.row(null, FILE_IN_OWN_THREAD, [fileId, actor.company.id])) !== null;
     });
+    this.watchAccess.register('thread', (actor, id) => this.access.has(actor, id));
   }
 }

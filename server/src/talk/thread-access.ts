@@ -1,5 +1,5 @@
 import { Injectable } from '@nestjs/common';
-import type { Actor } from '@kerfyard/common/people';
+import { may, type Actor } from '@kerfyard/common/people';
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
 import { LOCK_THREAD, THREAD_SIDES } from './talk.queries.ts';
@@ -20,6 +20,12 @@ export class ThreadAccess {
   /** @throws AppError 404 for unknown and foreign ids alike */
   async demand(tx: Tx | null, actor: Actor, threadId: string): Promise<ThreadRow> {
     return this.find(tx, THREAD_SIDES, actor, threadId);
+  }
+
+  /** Whether a thread is one of the actor's company's; for those who only look, the permission included. */
+  async has(actor: Actor, threadId: string): Promise<boolean> {
+    if (actor.company === null || !may(actor, 'talk')) return false;
+    return (await this.uow.row(null, THREAD_SIDES, [threadId, actor.company.id])) !== null;
   }
 
   /** The same under the row's lock: what gives out sequence numbers. */
