@@ -10,6 +10,8 @@ export const paths = {
   openScopes: '/open-scopes',
   bids: '/bids',
   work: '/work',
+  workItem: (id: string) => `/work/${id}`,
+  workMoney: (id: string) => `/work/${id}/money`,
   money: '/money',
   books: '/books',
 } as const;
