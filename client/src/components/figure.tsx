@@ -43,7 +43,7 @@ export function Figure({ label, value, unit, digits = 1, size = 'normal', workin
         </button>
       </Popover.Trigger>
       <Popover.Content maxWidth="min(30rem, calc(100vw - 2rem))" aria-label={t('figure.title', { label })}>
-        <Working label={label} steps={working} />
+        <Working label={label} figure={figure} steps={working} />
       </Popover.Content>
     </Popover.Root>
   );

@@ -1,17 +1,26 @@
 import type { WorkingSource, WorkingStep } from '@kerfyard/common/cutting';
-import { Text } from '@radix-ui/themes';
+import type { ReactNode } from 'react';
 import { useTranslation } from 'react-i18next';
 import { formatNumber } from '../lib/format.ts';
 import styles from './working.module.css';
 
 /** The steps behind a figure: formula, numbers put in, result, and whose number it was. */
-export function Working({ label, steps }: { label: string; steps: readonly WorkingStep[] }) {
+export function Working({
+  label,
+  figure,
+  steps,
+}: {
+  label: string;
+  figure: ReactNode;
+  steps: readonly WorkingStep[];
+}) {
   const { t } = useTranslation();
   return (
     <div className={styles.working}>
-      <Text as="p" size="2" weight="medium">
-        {t('figure.title', { label })}
-      </Text>
+      <p className={styles.title}>
+        <span>{t('figure.title', { label })}</span>
+        <span className={styles.answer}>{figure}</span>
+      </p>
       <ol className={styles.steps}>
         {steps.map((step, index) => (
           <li key={`${step.label}${index}`} className={styles.step}>

@@ -62,7 +62,7 @@ export default function CompanyPage() {
 function useBackFromPayouts(): void {
   const client = useQueryClient();
   const [search, setSearch] = useSearchParams();
-  const isBack = search.get('payouts') === 'back';
+  const isBack = search.has('payouts');
   useEffect(() => {
     if (!isBack) return;
     void client.invalidateQueries({ queryKey: companyKeys.own });

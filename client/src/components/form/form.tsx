@@ -65,7 +65,9 @@ export function Form<Input extends FieldValues, Output>({
 function linesOf(errors: FieldErrors, labels: Record<string, string>): SummaryLine[] {
   return Object.entries(labels).flatMap(([name, label]) => {
     const message = messageAt(errors, name);
-    return message === undefined ? [] : [{ name, text: `${label}: ${message}` }];
+    return message === undefined
+      ? []
+      : [{ name, text: `${label}${/[?:]$/.test(label) ? '' : ':'} ${message}` }];
   });
 }
 

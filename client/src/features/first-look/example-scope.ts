@@ -1,5 +1,6 @@
 import { priceCuts, takeoffCutList, type Cut, type WorkingStep } from '@kerfyard/common/cutting';
 import type { MoneyLineView } from '@kerfyard/common/payments';
+import { totalWorking } from '../../lib/total-working.ts';
 
 /** The invented scope of the first page; the visitor may change its trench and slab. */
 export interface ExampleInput {
@@ -47,9 +48,8 @@ export function exampleScope({ trenchFt, slabIn }: ExampleInput): ExampleScope {
     },
     { kind: 'core', diameterIn: 8, depthIn: slabIn, count: 3 },
   ];
-  const { totals, cuts: taken } = takeoffCutList({ cuts });
-  const steps = (label: RegExp) =>
-    taken.flatMap((cut) => cut.working).filter((step) => label.test(step.label));
+  const takeoff = takeoffCutList({ cuts });
+  const { totals } = takeoff;
   const price = priceCuts({
     lines: [
       {
@@ -81,9 +81,11 @@ export function exampleScope({ trenchFt, slabIn }: ExampleInput): ExampleScope {
     pieces: totals.pieces,
     heaviestLb: totals.heaviestPieceLb,
     working: {
-      sawFt: steps(/saw feet/i),
-      inchFeet: steps(/inch-feet/i),
-      pieces: steps(/piece|cross cut/i),
+      sawFt: totalWorking(takeoff, 'sawFt', { label: 'All cuts', unit: 'ft' }),
+      inchFeet: totalWorking(takeoff, 'inchFeet', { label: 'All cuts', unit: 'in-ft' }),
+      pieces: takeoff.cuts.flatMap((cut) =>
+        cut.working.filter((step) => /piece|cross cut/i.test(step.label)),
+      ),
       price: price.working,
     },
     priceCents: price.totalCents,

@@ -28,7 +28,7 @@ export default function SignInAgainDialog() {
 
   return (
     <Dialog.Root open onOpenChange={(open) => !open && sessionGate.answer(false)}>
-      <Dialog.Content maxWidth="26rem">
+      <Dialog.Content maxWidth="26rem" onOpenAutoFocus={focusPassword}>
         <Dialog.Title>{t('signInAgain.title')}</Dialog.Title>
         <Dialog.Description size="2" color="gray" mb="4">
           {t('signInAgain.text')}
@@ -47,4 +47,14 @@ export default function SignInAgainDialog() {
       </Dialog.Content>
     </Dialog.Root>
   );
+}
+
+/** The e-mail is known: what is missing is the password. */
+function focusPassword(event: Event): void {
+  const content = event.currentTarget;
+  if (!(content instanceof HTMLElement)) return;
+  const password = content.querySelector<HTMLInputElement>('input[type="password"]');
+  if (password === null) return;
+  event.preventDefault();
+  password.focus();
 }
