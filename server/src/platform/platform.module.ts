@@ -5,6 +5,7 @@ import { CONFIG, type Config } from './config/config.ts';
 import { KeyVault } from './crypto/key-vault.ts';
 import { DatabaseModule } from './database/database.module.ts';
 import { UnitOfWork } from './database/unit-of-work.ts';
+import { IdempotencyKeys } from './idempotency/idempotency-keys.ts';
 import { JobQueue } from './jobs/job-queue.ts';
 import { Sweeps } from './jobs/sweeps.ts';
 import { LiveHints } from './realtime/live-hints.ts';
@@ -20,6 +21,7 @@ const services = [
   LiveHints,
   WatchAccess,
   KeyVault,
+  IdempotencyKeys,
   { provide: STRIPE, inject: [CONFIG], useFactory: createStripeClient },
 ];
 const exported = services.map((service) => ('provide' in service ? service.provide : service));

@@ -1,0 +1,5 @@
+export const IDEMPOTENT = 'kerfyard:idempotent';
+
+export interface IdempotentOptions {
+  keepsReply: boolean;
+}
