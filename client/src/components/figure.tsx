@@ -1,9 +1,11 @@
 import type { WorkingStep } from '@kerfyard/common/cutting';
-import { Popover } from '@radix-ui/themes';
+import { lazy, Suspense, useState, type ComponentProps } from 'react';
 import { useTranslation } from 'react-i18next';
 import { formatNumber } from '../lib/format.ts';
 import styles from './figure.module.css';
-import { Working } from './working.tsx';
+
+// Lists are full of figures and few of them are opened: the popover's code comes with the first press.
+const FigureOpened = lazy(() => import('./figure-opened.tsx'));
 
 interface FigureProps {
   /** What the figure is, for those who hear it: "Sawing". */
@@ -21,7 +23,9 @@ interface FigureProps {
 /** A figure with its unit beside it, lighter; a computed one opens to its formula, the numbers put in and their source. */
 export function Figure({ label, value, unit, digits = 1, size = 'normal', working }: FigureProps) {
   const { t } = useTranslation();
+  const [wanted, setWanted] = useState(false);
   const shown = typeof value === 'number' ? formatNumber(value, digits) : value;
+  const sizeClass = styles[`${size}Size`] ?? '';
   const figure = (
     <>
       <span className={styles.value}>{shown}</span>
@@ -29,22 +33,19 @@ export function Figure({ label, value, unit, digits = 1, size = 'normal', workin
     </>
   );
   if (working === undefined || working.length === 0) {
-    return <span className={`${styles.figure} ${styles[`${size}Size`]}`}>{figure}</span>;
+    return <span className={`${styles.figure} ${sizeClass}`}>{figure}</span>;
   }
+  const button: ComponentProps<'button'> = {
+    type: 'button',
+    className: `${styles.figure} ${styles.opens} ${sizeClass}`,
+    'aria-label': t('figure.open', { label, value: `${shown} ${unit}`.trim() }),
+    children: figure,
+  };
+  const closed = <button {...button} aria-haspopup="dialog" onClick={() => setWanted(true)} />;
+  if (!wanted) return closed;
   return (
-    <Popover.Root>
-      <Popover.Trigger>
-        <button
-          type="button"
-          className={`${styles.figure} ${styles.opens} ${styles[`${size}Size`]}`}
-          aria-label={t('figure.open', { label, value: `${shown} ${unit}`.trim() })}
-        >
-          {figure}
-        </button>
-      </Popover.Trigger>
-      <Popover.Content maxWidth="min(30rem, calc(100vw - 2rem))" aria-label={t('figure.title', { label })}>
-        <Working label={label} figure={figure} steps={working} />
-      </Popover.Content>
-    </Popover.Root>
+    <Suspense fallback={closed}>
+      <FigureOpened label={label} figure={figure} steps={working} button={button} />
+    </Suspense>
   );
 }

@@ -1,0 +1,37 @@
+import type { MeView } from '@kerfyard/common/people';
+import { DropdownMenu } from '@radix-ui/themes';
+import { useTranslation } from 'react-i18next';
+import { themeChoices, useTheme } from '../../../lib/theme.ts';
+import { useSignOut } from '../hooks/use-session.ts';
+import { AccountButton } from './account-button.tsx';
+
+/** The menu behind the button, open as soon as it is here. */
+export default function AccountMenuOpened({ me }: { me: MeView }) {
+  const { t } = useTranslation();
+  const [theme, chooseTheme] = useTheme();
+  const signOut = useSignOut();
+  return (
+    <DropdownMenu.Root defaultOpen>
+      <DropdownMenu.Trigger>
+        <AccountButton me={me} />
+      </DropdownMenu.Trigger>
+      <DropdownMenu.Content align="end" color="gray">
+        <DropdownMenu.Label>
+          {me.role === null ? t('account.staff') : t('account.role', { role: t(`roles.${me.role}`) })}
+        </DropdownMenu.Label>
+        <DropdownMenu.RadioGroup
+          value={theme}
+          onValueChange={(value) => chooseTheme(themeChoices.find((choice) => choice === value) ?? 'system')}
+        >
+          {themeChoices.map((choice) => (
+            <DropdownMenu.RadioItem key={choice} value={choice}>
+              {t(`theme.${choice}`)}
+            </DropdownMenu.RadioItem>
+          ))}
+        </DropdownMenu.RadioGroup>
+        <DropdownMenu.Separator />
+        <DropdownMenu.Item onSelect={() => signOut.mutate()}>{t('signOut')}</DropdownMenu.Item>
+      </DropdownMenu.Content>
+    </DropdownMenu.Root>
+  );
+}
