@@ -60,6 +60,10 @@ export const bidInputSchema = z.strictObject({
 });
 export type BidInput = z.output<typeof bidInputSchema>;
 
+/** A price to be shown before it is sent: cuts may still be without a line. */
+export const bidPriceInputSchema = z.strictObject({ revision: z.number().int().min(1), price: priceSchema });
+export type BidPriceInput = z.output<typeof bidPriceInputSchema>;
+
 /** A bid draft is anything of bounded size; it is stored encrypted like the bid itself. */
 export const bidDraftSchema = z.strictObject({ draft: z.record(z.string().max(60), z.unknown()) });
 

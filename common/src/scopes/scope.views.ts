@@ -78,6 +78,11 @@ export interface ScopeDetailView {
   isOwn: boolean;
   /** The published body, or null while it is a draft. */
   body: ScopeBody | null;
+  /**
+   * True for a crew whose service radius does not reach the site and that has no bid, thread or subcontract here:
+   * address, contact, access, exact position, photos and drawings are left out of the answer.
+   */
+  isSiteHeldBack: boolean;
   revision: number | null;
   totals: ScopeTotals | null;
   methods: Method[];

@@ -31,6 +31,7 @@ export const scopesAndBids: Migration = {
         ]) END
       ) STORED,
       methods text[] NOT NULL DEFAULT '{}',
+      indoors boolean NOT NULL DEFAULT false,
       inch_feet double precision,
       totals jsonb,
       sketch jsonb NOT NULL DEFAULT '[]',
