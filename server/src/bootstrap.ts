@@ -4,6 +4,7 @@ import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import { AppModule } from './app.module.ts';
 import type { Config } from './platform/config/config.ts';
+import { serveApiDocs } from './platform/http/api-docs.ts';
 import { JSON_LIMIT_BYTES, limitBody } from './platform/http/body-limits.ts';
 import { demandJson } from './platform/http/body-types.ts';
 import { serveClient } from './platform/http/client-files.ts';
@@ -37,5 +38,6 @@ export async function bootstrap(config: Config): Promise<NestExpressApplication>
   app.useBodyParser('json', { limit: JSON_LIMIT_BYTES, strict: true });
   app.use(limitBody);
   app.useWebSocketAdapter(new LiveAdapter(app, config));
+  if (config.mode === 'development') await serveApiDocs(app);
   return app;
 }

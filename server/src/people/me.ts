@@ -1,7 +1,7 @@
 import { Injectable } from '@nestjs/common';
 import { may, permissions, type Actor, type MeView, type PermissionName } from '@kerfyard/common/people';
 import { AccessTokens } from '../platform/auth/access-tokens.ts';
-import { Sessions } from '../platform/auth/sessions.ts';
+import { Actors } from '../platform/auth/actors.ts';
 import { toNumber } from '../platform/database/codecs.ts';
 import { UnitOfWork } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
@@ -12,7 +12,7 @@ import { COUNT_UNREAD, SELECT_EMAIL } from './people.queries.ts';
 export class Me {
   constructor(
     private readonly uow: UnitOfWork,
-    private readonly sessions: Sessions,
+    private readonly actors: Actors,
     private readonly accessTokens: AccessTokens,
   ) {}
 
@@ -31,7 +31,7 @@ export class Me {
   /** The view of whoever an access token, made this moment, belongs to. */
   async viewOf(accessToken: string): Promise<MeView> {
     const claims = this.accessTokens.read(accessToken);
-    const actor = claims === null ? null : await this.sessions.actor(claims);
+    const actor = claims === null ? null : await this.actors.ofSession(claims);
     if (actor === null) throw new AppError('unauthenticated');
     return this.view(actor);
   }

@@ -1,4 +1,4 @@
-import type { CompanyKind, Role } from '@kerfyard/common/people';
+import type { CompanyKind } from '@kerfyard/common/people';
 
 export interface CredentialsRow {
   id: string;
@@ -74,13 +74,3 @@ export const COUNT_UNREAD = `
   JOIN message m ON m.thread_id = t.id AND m.author_id <> $1
   LEFT JOIN thread_read r ON r.thread_id = t.id AND r.user_id = $1
   WHERE $2 IN (t.gc_company_id, t.crew_company_id) AND m.seq > coalesce(r.seq, 0)`;
-
-export interface ActorOfUserRow {
-  user_id: string;
-  name: string;
-  is_staff: boolean;
-  company_id: string | null;
-  company_kind: CompanyKind | null;
-  company_name: string | null;
-  role: Role | null;
-}

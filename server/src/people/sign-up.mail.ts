@@ -41,7 +41,10 @@ export class SignUpMail implements OnModuleInit {
         'If that was you, confirm the address and then sign in with the password you chose. The link works once, for one hour.',
         'If it was not you, do nothing: without the link no account is made.',
       ],
-      action: { label: 'Confirm the address', path: `/verify?token=${verifyToken(this.config, signUpId)}` },
+      action: {
+        label: 'Confirm the address',
+        path: `/verify?token=${verifyToken(this.config.signingSecret, signUpId)}`,
+      },
     };
   }
 }

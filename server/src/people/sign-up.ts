@@ -77,7 +77,7 @@ export class SignUpService implements OnModuleInit {
         input.company.kind,
         input.company.name,
         input.company.phone,
-        hashToken(verifyToken(this.config, id)),
+        hashToken(verifyToken(this.config.signingSecret, id)),
         LINK_SECONDS,
       ]);
       await this.mailer.toUsers(tx, SIGN_UP_MAIL, [id], {});

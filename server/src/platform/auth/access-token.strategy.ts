@@ -5,8 +5,8 @@ import { Strategy } from 'passport-jwt';
 import type { Actor } from '@kerfyard/common/people';
 import { CONFIG, type Config } from '../config/config.ts';
 import { ACCESS_AUDIENCE, accessClaimsSchema, accessTokenKey } from './access-tokens.ts';
+import { Actors } from './actors.ts';
 import { readCookie } from './cookies.ts';
-import { Sessions } from './sessions.ts';
 
 export const ACCESS_STRATEGY = 'access-token';
 
@@ -15,7 +15,7 @@ export const ACCESS_STRATEGY = 'access-token';
 export class AccessTokenStrategy extends PassportStrategy(Strategy, ACCESS_STRATEGY) {
   constructor(
     @Inject(CONFIG) config: Config,
-    private readonly sessions: Sessions,
+    private readonly actors: Actors,
   ) {
     super({
       jwtFromRequest: (request: Request) => readCookie(config, request, 'access'),
@@ -29,6 +29,6 @@ export class AccessTokenStrategy extends PassportStrategy(Strategy, ACCESS_STRAT
   async validate(claims: unknown): Promise<Actor | false> {
     const parsed = accessClaimsSchema.safeParse(claims);
     if (!parsed.success) return false;
-    return (await this.sessions.actor(parsed.data)) ?? false;
+    return (await this.actors.ofSession(parsed.data)) ?? false;
   }
 }

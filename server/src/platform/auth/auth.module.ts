@@ -7,6 +7,7 @@ import { RateLimits } from '../limits/rate-limits.ts';
 import { AccessGuard } from './access.guard.ts';
 import { AccessTokenStrategy } from './access-token.strategy.ts';
 import { AccessTokens } from './access-tokens.ts';
+import { Actors } from './actors.ts';
 import { Passwords } from './passwords.ts';
 import { Sessions } from './sessions.ts';
 
@@ -16,6 +17,7 @@ import { Sessions } from './sessions.ts';
   imports: [PassportModule, JwtModule.register({})],
   providers: [
     Sessions,
+    Actors,
     AccessTokens,
     AccessTokenStrategy,
     Passwords,
@@ -23,6 +25,6 @@ import { Sessions } from './sessions.ts';
     { provide: APP_GUARD, useClass: AccessGuard },
     { provide: APP_GUARD, useClass: ChangeLimitGuard },
   ],
-  exports: [Sessions, AccessTokens, Passwords, RateLimits],
+  exports: [Sessions, Actors, AccessTokens, Passwords, RateLimits],
 })
 export class AuthModule {}

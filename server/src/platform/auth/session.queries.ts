@@ -2,33 +2,8 @@
  * Sessions live by the database's real time, not by `app_now()`: moving the demo's clock signs nobody out, and no
  * moved clock keeps a session alive.
  */
-const LIVE = `ended_at IS NULL AND expires_at > clock_timestamp()
-  AND last_used_at > clock_timestamp() - $3 * interval '1 second'`;
-
-export interface ActorRow {
-  user_id: string;
-  name: string;
-  email: string;
-  is_staff: boolean;
-  company_id: string | null;
-  company_kind: 'general_contractor' | 'cutting_contractor' | null;
-  company_name: string | null;
-  role: 'owner' | 'accounts' | 'manager' | 'field' | null;
-  sign_limit_cents: string | null;
-  set_aside_limit_cents: string | null;
-  change_limit_cents: string | null;
-}
-
-/** $1 session, $2 user, $3 idle seconds. One query a request: session, person, membership, company. */
-export const SELECT_ACTOR = `
-  SELECT u.id AS user_id, u.name, u.email, u.is_staff, c.id AS company_id, c.kind AS company_kind,
-    c.name AS company_name, m.role, m.sign_limit_cents, m.set_aside_limit_cents, m.change_limit_cents
-  FROM session s
-  JOIN app_user u ON u.id = s.user_id
-  LEFT JOIN membership m ON m.user_id = u.id
-  LEFT JOIN company c ON c.id = m.company_id
-  WHERE s.id = $1 AND s.user_id = $2 AND ${LIVE}
-    AND u.deactivated_at IS NULL AND u.email_verified_at IS NOT NULL`;
+export const live = (idleSeconds: '$2' | '$3') => `s.ended_at IS NULL AND s.expires_at > clock_timestamp()
+  AND s.last_used_at > clock_timestamp() - ${idleSeconds} * interval '1 second'`;
 
 export const INSERT_SESSION = `
   INSERT INTO session (id, user_id, refresh_hash, created_at, last_used_at, expires_at, ip, user_agent)
@@ -49,7 +24,7 @@ export const LOCK_SESSION = `SELECT id FROM session WHERE id = $1 FOR UPDATE`;
 
 export const SELECT_SESSION_STATE = `
   SELECT s.id, s.user_id, s.refresh_hash, s.previous_hash, s.successor_sealed,
-    (${LIVE} AND EXISTS (SELECT 1 FROM app_user u WHERE u.id = s.user_id AND u.deactivated_at IS NULL)) AS is_live,
+    (${live('$3')} AND EXISTS (SELECT 1 FROM app_user u WHERE u.id = s.user_id AND u.deactivated_at IS NULL)) AS is_live,
     coalesce(s.rotated_at > clock_timestamp() - $2 * interval '1 second', false) AS is_in_grace
   FROM session s WHERE s.id = $1`;
 
@@ -65,9 +40,9 @@ export const END_SESSION = `
   UPDATE session SET ended_at = clock_timestamp(), ended_because = $2, successor_sealed = NULL
   WHERE id = $1 AND ended_at IS NULL RETURNING user_id`;
 
-/** $1 sessions that hold a socket open, $2 unused, $3 idle seconds: those that may no longer. */
+/** $1 sessions that hold a socket open, $2 idle seconds: those that may no longer. */
 export const SELECT_DEAD_SESSIONS = `
   SELECT id FROM unnest($1::uuid[]) AS open (id)
-  WHERE $2::text IS NULL AND NOT EXISTS (
+  WHERE NOT EXISTS (
     SELECT 1 FROM session s JOIN app_user u ON u.id = s.user_id
-    WHERE s.id = open.id AND u.deactivated_at IS NULL AND ${LIVE})`;
+    WHERE s.id = open.id AND u.deactivated_at IS NULL AND ${live('$2')})`;

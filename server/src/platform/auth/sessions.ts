@@ -1,12 +1,10 @@
 import { Injectable } from '@nestjs/common';
-import type { Actor } from '@kerfyard/common/people';
 import { Audit } from '../audit/audit.ts';
-import { toNumber } from '../database/codecs.ts';
 import { UnitOfWork, type Tx } from '../database/unit-of-work.ts';
 import { newId } from '../ids/ids.ts';
 import { LiveHints } from '../realtime/live-hints.ts';
 import type { Origin } from './access.decorators.ts';
-import { AccessTokens, type AccessClaims } from './access-tokens.ts';
+import { AccessTokens } from './access-tokens.ts';
 import type { SessionTokens } from './cookies.ts';
 import {
   hasHash,
@@ -21,21 +19,12 @@ import {
   INSERT_SESSION,
   LOCK_SESSION,
   ROTATE_SESSION,
-  SELECT_ACTOR,
   SELECT_DEAD_SESSIONS,
   SELECT_SESSION_STATE,
   TOUCH_SESSION,
-  type ActorRow,
   type SessionRow,
 } from './session.queries.ts';
-
-const DAY = 86_400;
-/** A session ends after this long without a refresh (pages refresh every few minutes while open). */
-const IDLE_SECONDS = 7 * DAY;
-/** And after this long whatever happens. */
-const ABSOLUTE_SECONDS = 30 * DAY;
-/** Two tabs, or a lost reply: the token just replaced still leads to its one successor. */
-const GRACE_SECONDS = 30;
+import { ABSOLUTE_SECONDS, GRACE_SECONDS, IDLE_SECONDS } from './session-times.ts';
 
 /** Opens, renews and ends sessions. The row is the session; tokens only point at it. */
 @Injectable()
@@ -46,12 +35,6 @@ export class Sessions {
     private readonly audit: Audit,
     private readonly hints: LiveHints,
   ) {}
-
-  /** Who a token's session belongs to, or null when it ended, ran out or the person was deactivated. */
-  async actor(claims: Pick<AccessClaims, 'sid' | 'sub'>): Promise<Actor | null> {
-    const row = await this.uow.row<ActorRow>(null, SELECT_ACTOR, [claims.sid, claims.sub, IDLE_SECONDS]);
-    return row === null ? null : toActor(row, claims.sid);
-  }
 
   /** A new session; never one that a browser brought along. */
   async open(tx: Tx, userId: string, origin: Origin): Promise<SessionTokens> {
@@ -146,11 +129,7 @@ export class Sessions {
 
   /** Which of these sessions may no longer hold a socket open. */
   async dead(sessionIds: string[]): Promise<string[]> {
-    const rows = await this.uow.rows<{ id: string }>(null, SELECT_DEAD_SESSIONS, [
-      sessionIds,
-      null,
-      IDLE_SECONDS,
-    ]);
+    const rows = await this.uow.rows<{ id: string }>(null, SELECT_DEAD_SESSIONS, [sessionIds, IDLE_SECONDS]);
     return rows.map((row) => row.id);
   }
 
@@ -161,25 +140,4 @@ export class Sessions {
       refreshUntil: new Date(Date.now() + IDLE_SECONDS * 1_000),
     };
   }
-}
-
-function toActor(row: ActorRow, sessionId: string): Actor {
-  const isOwner = row.role === 'owner';
-  const limit = (cents: string | null) => (isOwner ? null : toNumber(cents));
-  const hasCompany = row.company_id !== null && row.company_kind !== null && row.company_name !== null;
-  return {
-    userId: row.user_id,
-    sessionId,
-    name: row.name,
-    isStaff: row.is_staff,
-    company: hasCompany
-      ? { id: row.company_id as string, kind: row.company_kind!, name: row.company_name! }
-      : null,
-    role: row.role,
-    limits: {
-      signCents: limit(row.sign_limit_cents),
-      setAsideCents: limit(row.set_aside_limit_cents),
-      changeCents: limit(row.change_limit_cents),
-    },
-  };
 }

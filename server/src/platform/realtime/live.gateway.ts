@@ -19,6 +19,7 @@ import {
 } from '@kerfyard/common/realtime';
 import { SignedIn } from '../auth/access.decorators.ts';
 import { AccessTokens } from '../auth/access-tokens.ts';
+import { Actors } from '../auth/actors.ts';
 import { readCookie } from '../auth/cookies.ts';
 import { Sessions } from '../auth/sessions.ts';
 import { CONFIG, type Config } from '../config/config.ts';
@@ -49,6 +50,7 @@ export class LiveGateway
   constructor(
     @Inject(CONFIG) private readonly config: Config,
     private readonly accessTokens: AccessTokens,
+    private readonly actors: Actors,
     private readonly sessions: Sessions,
     private readonly hints: LiveHints,
     private readonly watchAccess: WatchAccess,
@@ -82,7 +84,7 @@ export class LiveGateway
   private async authenticate(socket: LiveSocket): Promise<Actor | null> {
     const token = readCookie(this.config, socket.request as unknown as Request, 'access');
     const claims = token === null ? null : this.accessTokens.read(token);
-    return claims === null ? null : this.sessions.actor(claims);
+    return claims === null ? null : this.actors.ofSession(claims);
   }
 
   async handleConnection(socket: LiveSocket): Promise<void> {
