@@ -27,7 +27,7 @@ export const hospitalFloorPlan: FloorPlanData = {
     firmLine: '77 Tannery Row, Columbus, Ohio · Commission 2619',
     number: 'A-212',
     title: 'Level 2 Part Plan: Slab Openings',
-    revision: 'B, issued for bids',
+    revision: 'B',
     date: '2026-10-14',
     drawnBy: 'TLM',
     checkedBy: 'RV',
@@ -139,7 +139,7 @@ export const millFloorPlan: FloorPlanData = {
 export const waterMainTrench: TrenchPlanData = {
   sheet: sheet({
     project: 'Quarry Lane Water Main Renewal',
-    address: 'Quarry Lane, stations 0+10 to 1+30, Toledo, Ohio 43604',
+    address: 'Quarry Lane, stations 0+10 to 1+20, Toledo, Ohio 43604',
     firm: 'Brightwater Civil Group',
     firmLine: '240 Ferry Landing, Toledo, Ohio · Project 26-088',
     number: 'C-05',
@@ -159,12 +159,12 @@ export const waterMainTrench: TrenchPlanData = {
   }),
   view: 'TRENCH SAWING PLAN',
   street: 'QUARRY LANE',
-  sizeFt: [140, 46],
+  sizeFt: [130, 46],
   walkFt: 5,
-  trench: { mark: 'T1', fromFt: 12, toFt: 128, offsetFt: 30, widthFt: 3 },
+  trench: { mark: 'T1', fromFt: 10, toFt: 120, offsetFt: 30, widthFt: 3 },
   laterals: [
     { mark: 'T2', atFt: 38, lengthFt: 14, widthFt: 2 },
-    { mark: 'T3', atFt: 96, lengthFt: 14, widthFt: 2 },
+    { mark: 'T3', atFt: 92, lengthFt: 14, widthFt: 2 },
   ],
   lines: [
     { name: 'EXIST. GAS 4"', offsetFt: 9 },
@@ -172,6 +172,7 @@ export const waterMainTrench: TrenchPlanData = {
     { name: 'EXIST. WATER 6" (TO BE LEFT)', offsetFt: 36.5 },
   ],
   section: { asphaltIn: 2, concreteIn: 7, baseIn: 6, trenchDepthFt: 5, pipe: 'NEW 8" MAIN' },
+  text: 'Asphalt overlay of 2006 on a 7" concrete base, mesh at mid depth (record). Sawn sides stay as the edge of the patch: keep them straight to 1/4" in 10 ft. Break, load and haul by the general contractor; sawing and slurry by the cutting contractor. Work hours 9:00 to 16:00.',
   north: 62,
 };
 
@@ -223,6 +224,7 @@ export const stationWall: WallElevationData = {
   lengthFt: 64,
   heightFt: 18,
   thicknessIn: 14,
+  text: 'Existing cast wall between concourse and east vestibule, 14" thick, two mats. Saw from the concourse side; the vestibule stays closed from 22:00 to 05:00. Pieces leave by the freight door at line 11; its clear width is 7\'-0". Catch and pump slurry: the track drain below is not to be used.',
   construction: '14" CAST WALL, No. 6 AT 12" EACH WAY EACH FACE (RECORD)',
   grid: [
     { name: '8', xFt: 2 },
@@ -230,10 +232,10 @@ export const stationWall: WallElevationData = {
     { name: '10', xFt: 42 },
     { name: '11', xFt: 62 },
   ],
-  doors: [{ xFt: 47, widthFt: 3.5, heightFt: 7, name: 'EXIST. 114A' }],
+  doors: [{ xFt: 44, widthFt: 3.5, heightFt: 7, name: 'EXIST. 114A' }],
   openings: [
     { mark: 'W1', xFt: 9, sillFt: 0, widthFt: 8, heightFt: 9, use: 'Elevator lobby, double door' },
     { mark: 'W2', xFt: 29, sillFt: 4, widthFt: 6, heightFt: 5, use: 'Ticket window' },
   ],
-  cores: [{ mark: 'K1', xFt: 53.5, heightFt: 13, diameterIn: 8, count: 4, use: 'Smoke exhaust sleeves' }],
+  cores: [{ mark: 'K1', xFt: 55, heightFt: 13, diameterIn: 8, count: 4, use: 'Smoke exhaust sleeves' }],
 };

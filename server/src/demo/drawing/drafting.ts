@@ -1,5 +1,5 @@
 import { feetAndInches } from './feet-and-inches.ts';
-import { ink, label, stroke, type Pdf, type Point } from './sheet.ts';
+import { fonts, ink, label, stroke, type Pdf, type Point } from './sheet.ts';
 
 const toward = ([ax, ay]: Point, [bx, by]: Point, distance: number): Point => {
   const length = Math.hypot(bx - ax, by - ay) || 1;
@@ -104,7 +104,7 @@ export function viewTitle(
     .restore();
   label(doc, view.number, [x + 12, y], { size: 11, bold: true, align: 'center' });
   label(doc, view.title, [x + 32, y - 6], { size: 11, bold: true });
-  const width = Math.max(160, doc.widthOfString(view.title) + 12);
+  const width = doc.widthOfString(view.title) + 12;
   stroke(
     doc,
     [
@@ -218,4 +218,12 @@ export function table(doc: Pdf, { title, at: [x, y], columns, rows }: Table): nu
     left += column.width;
   });
   return 18 + height;
+}
+
+/** A heading with a paragraph under it. */
+export function textBlock(doc: Pdf, block: { title: string; text: string; at: Point; width: number }): void {
+  const [x, y] = block.at;
+  label(doc, block.title, [x, y + 6], { size: 10, bold: true });
+  doc.font(fonts.regular).fontSize(8).fillColor(ink.line);
+  doc.text(block.text, x, y + 20, { width: block.width, lineGap: 2 });
 }

@@ -1,4 +1,13 @@
-import { cutMark, dimension, gridLine, northArrow, scaleBar, table, viewTitle } from './drafting.ts';
+import {
+  cutMark,
+  dimension,
+  gridLine,
+  northArrow,
+  scaleBar,
+  table,
+  textBlock,
+  viewTitle,
+} from './drafting.ts';
 import { feetAndInches, inches } from './feet-and-inches.ts';
 import { hatchConcrete, hatchLines } from './hatching.ts';
 import { ink, label, stroke, View, type Pdf, type SheetData } from './sheet.ts';
@@ -167,7 +176,7 @@ function nearestBefore(lines: readonly number[], place: number): number {
 
 type Core = FloorPlanData['cores'][number];
 
-function drawCore(doc: Pdf, view: View, _data: FloorPlanData, core: Core): void {
+function drawCore(doc: Pdf, view: View, data: FloorPlanData, core: Core): void {
   const at = view.at(...core.at);
   const radius = Math.max(3, view.ft(core.diameterIn / 24));
   doc.save().lineWidth(1.3).circle(at[0], at[1], radius).fillAndStroke('#f7e4e1', ink.cut).restore();
@@ -187,6 +196,7 @@ function drawCore(doc: Pdf, view: View, _data: FloorPlanData, core: Core): void 
     ],
     { width: 0.4, color: ink.cut },
   );
+  locate(doc, view, data, { at: core.at, below: at[1] + radius + 14 });
   cutMark(doc, core.mark, [at[0] + 26, at[1] - 24], [at[0] + radius * 0.7, at[1] - radius * 0.7]);
 }
 
@@ -212,10 +222,5 @@ function drawSchedule(doc: Pdf, data: FloorPlanData): void {
     ],
     rows: [...openings, ...cores].slice(0, 7),
   });
-  label(doc, 'SLAB', [570, 624], { size: 10, bold: true });
-  doc
-    .font('regular')
-    .fontSize(8)
-    .fillColor(ink.line)
-    .text(data.slab.text, 570, 638, { width: 380, lineGap: 2 });
+  textBlock(doc, { title: 'SLAB', text: data.slab.text, at: [570, 618], width: 380 });
 }

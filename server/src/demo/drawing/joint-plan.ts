@@ -167,12 +167,16 @@ function drawDetail(doc: Pdf, { slabIn, jointDepthIn, jointWidthIn }: JointPlanD
       width: 0.7,
     },
   );
-  dimension(doc, {
-    from: [centre + 34, box.y],
-    to: [centre + 34, box.y + depth],
-    offset: 0.01,
-    lengthFt: jointDepthIn / 12,
-  });
+  const tip = box.y + depth * 0.6;
+  stroke(
+    doc,
+    [
+      [centre + 4, tip],
+      [centre + 44, tip],
+    ],
+    { width: 0.5 },
+  );
+  label(doc, `${inches(jointDepthIn)} deep`, [centre + 48, tip], { size: 7.5, backed: true });
   label(doc, `${widthText(jointWidthIn)} wide`, [centre, box.y - 12], { size: 7.5, align: 'center' });
   dimension(doc, {
     from: [box.x + box.width, box.y],

@@ -1,4 +1,13 @@
-import { cutMark, dimension, northArrow, scaleBar, sectionMark, table, viewTitle } from './drafting.ts';
+import {
+  cutMark,
+  dimension,
+  northArrow,
+  scaleBar,
+  sectionMark,
+  table,
+  textBlock,
+  viewTitle,
+} from './drafting.ts';
 import { feetAndInches, inches } from './feet-and-inches.ts';
 import { hatchConcrete, hatchEarth, hatchLines, repeatable } from './hatching.ts';
 import { ink, label, stroke, View, type Pdf, type Point, type SheetData } from './sheet.ts';
@@ -16,6 +25,7 @@ export interface TrenchPlanData {
   laterals: readonly { mark: string; atFt: number; lengthFt: number; widthFt: number }[];
   lines: readonly { name: string; offsetFt: number }[];
   section: { asphaltIn: number; concreteIn: number; baseIn: number; trenchDepthFt: number; pipe: string };
+  text: string;
   north: number;
 }
 
@@ -88,7 +98,7 @@ function drawStreet(doc: Pdf, view: View, { sizeFt: [length, width], walkFt, str
     ],
     { width: 0.8, dash: [16, 8], color: ink.faint },
   );
-  label(doc, street, [(left + right) / 2, middle], {
+  label(doc, street, [left + (right - left) * 0.84, middle], {
     size: 15,
     bold: true,
     color: ink.soft,
@@ -109,7 +119,7 @@ function drawStreet(doc: Pdf, view: View, { sizeFt: [length, width], walkFt, str
       ],
       { width: 0.8 },
     );
-    label(doc, `0+${String(station).padStart(2, '0')}`, [x, top - 20], {
+    label(doc, `${Math.floor(station / 100)}+${String(station % 100).padStart(2, '0')}`, [x, top - 20], {
       size: 7,
       align: 'center',
       color: ink.soft,
@@ -139,7 +149,7 @@ function drawExisting(doc: Pdf, view: View, { lines, sizeFt: [length] }: TrenchP
       color: ink.water,
       dash: [9, 4],
     });
-    label(doc, name, [view.at(length * (0.16 + 0.14 * (index % 3)), 0)[0], y], {
+    label(doc, name, [view.at(length * (0.16 + 0.3 * (index % 3)), 0)[0], y], {
       size: 7,
       color: ink.water,
       backed: true,
@@ -152,7 +162,7 @@ function drawTrench(doc: Pdf, view: View, data: TrenchPlanData): void {
   const [x1, y1] = view.at(trench.fromFt, trench.offsetFt);
   const [x2, y2] = view.at(trench.toFt, trench.offsetFt + trench.widthFt);
   cutBox(doc, { x: x1, y: y1, width: x2 - x1, height: y2 - y1 });
-  dimension(doc, { from: [x1, y2], to: [x2, y2], offset: 26, lengthFt: trench.toFt - trench.fromFt });
+  dimension(doc, { from: [x1, y2], to: [x2, y2], offset: 36, lengthFt: trench.toFt - trench.fromFt });
   dimension(doc, { from: [x2, y1], to: [x2, y2], offset: -16, lengthFt: trench.widthFt });
   const kerb = view.at(0, sizeFt[1] - walkFt)[1];
   const measured = x1 - 18;
@@ -163,7 +173,7 @@ function drawTrench(doc: Pdf, view: View, data: TrenchPlanData): void {
     lengthFt: sizeFt[1] - walkFt - trench.offsetFt - trench.widthFt,
     size: 7,
   });
-  cutMark(doc, trench.mark, [x1 + (x2 - x1) * 0.62, y1 - 26], [x1 + (x2 - x1) * 0.58, y1]);
+  cutMark(doc, trench.mark, [x1 + (x2 - x1) * 0.56, y1 - 30], [x1 + (x2 - x1) * 0.53, y1]);
   laterals.forEach((lateral) => {
     const [x, y] = view.at(lateral.atFt, trench.offsetFt - lateral.lengthFt);
     const box = { x, y, width: view.ft(lateral.widthFt), height: view.ft(lateral.lengthFt) };
@@ -218,6 +228,7 @@ function drawSection(doc: Pdf, { section, trench }: TrenchPlanData, top: number)
     label(doc, layer.name, [centre + half + 154, y + height / 2], { size: 7.5 });
     y += height;
   });
+  const sawn = top + ((section.asphaltIn + section.concreteIn) / 12) * scale * 1.6;
   const floor = top + section.trenchDepthFt * scale * 1.05;
   hatchEarth(doc, { x: centre - half - 130, y, width: 130, height: floor - y + 16 });
   hatchEarth(doc, { x: centre + half, y, width: 130, height: floor - y + 16 });
@@ -227,9 +238,17 @@ function drawSection(doc: Pdf, { section, trench }: TrenchPlanData, top: number)
       doc,
       [
         [x, top - 10],
-        [x, y],
+        [x, sawn],
       ],
       { width: 2, color: ink.cut },
+    );
+    stroke(
+      doc,
+      [
+        [x, sawn],
+        [x, y],
+      ],
+      { width: 1 },
     );
     stroke(
       doc,
@@ -306,7 +325,7 @@ function aggregate(doc: Pdf, box: { x: number; y: number; width: number; height:
   doc.restore();
 }
 
-function drawSchedule(doc: Pdf, { trench, laterals, section }: TrenchPlanData, top: number): void {
+function drawSchedule(doc: Pdf, { trench, laterals, section, text }: TrenchPlanData, top: number): void {
   const depth = inches(section.asphaltIn + section.concreteIn);
   const row = (mark: string, lengthFt: number, widthFt: number, note: string) => [
     mark,
@@ -330,4 +349,5 @@ function drawSchedule(doc: Pdf, { trench, laterals, section }: TrenchPlanData, t
       ...laterals.map((l) => row(l.mark, l.lengthFt, l.widthFt, 'Service, both sides and far end')),
     ],
   });
+  textBlock(doc, { title: 'PAVEMENT', text, at: [520, top + 88], width: 426 });
 }

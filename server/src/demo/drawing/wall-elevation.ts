@@ -1,4 +1,4 @@
-import { cutMark, dimension, gridLine, sectionMark, table, viewTitle } from './drafting.ts';
+import { cutMark, dimension, gridLine, sectionMark, table, textBlock, viewTitle } from './drafting.ts';
 import { feetAndInches, inches } from './feet-and-inches.ts';
 import { hatchConcrete, hatchEarth } from './hatching.ts';
 import { ink, label, stroke, View, type Pdf, type SheetData } from './sheet.ts';
@@ -11,7 +11,9 @@ export interface WallElevationData {
   lengthFt: number;
   heightFt: number;
   thicknessIn: number;
+  /** As written on the wall. */
   construction: string;
+  text: string;
   grid: readonly { name: string; xFt: number }[];
   doors: readonly { xFt: number; widthFt: number; heightFt: number; name: string }[];
   openings: readonly {
@@ -115,7 +117,7 @@ function drawDoor(
     ],
     { width: 0.4, dash: [4, 3] },
   );
-  label(doc, door.name, [x + width / 2, y + height * 0.3], { size: 7, align: 'center', color: ink.soft });
+  label(doc, door.name, [x + width / 2, y - 8], { size: 7, align: 'center', color: ink.soft });
 }
 
 type Opening = WallElevationData['openings'][number];
@@ -300,4 +302,5 @@ function drawSchedule(doc: Pdf, data: WallElevationData, top: number): void {
     ],
     rows: [...openings, ...cores],
   });
+  textBlock(doc, { title: 'WALL', text: data.text, at: [640, top], width: 306 });
 }
