@@ -1,7 +1,7 @@
 import type { WorkingSource, WorkingStep } from '@kerfyard/common/cutting';
 import type { ReactNode } from 'react';
 import { useTranslation } from 'react-i18next';
-import { formatNumber } from '../lib/format.ts';
+import { formatNumber, formatRate } from '../lib/format.ts';
 import styles from './working.module.css';
 
 /** The steps behind a figure: formula, numbers put in, result, and whose number it was. */
@@ -27,7 +27,7 @@ export function Working({
             <div className={styles.head}>
               <span>{step.label}</span>
               <span className={styles.result}>
-                {show(step.value)} <span className={styles.unit}>{step.unit}</span>
+                <Amount value={step.value} unit={step.unit} />
               </span>
             </div>
             <code className={styles.formula}>{step.formula}</code>
@@ -37,7 +37,7 @@ export function Working({
                   <div key={input.name}>
                     <dt>{input.name}</dt>
                     <dd>
-                      {show(input.value)} <span className={styles.unit}>{input.unit}</span>
+                      <Amount value={input.value} unit={input.unit} />
                     </dd>
                   </div>
                 ))}
@@ -58,7 +58,21 @@ function Source({ source }: { source: WorkingSource }) {
   return <p className={styles.source}>{where.length === 0 ? origin : `${origin}: ${where.join(', ')}`}</p>;
 }
 
-/** Workings show more decimals than the figure itself, or the steps would not add up before the reader's eyes. */
-function show(value: number | string): string {
-  return typeof value === 'number' ? formatNumber(value, 3) : value;
+/** A number of a working and its unit; money, which the engine counts in cents, is shown in dollars. */
+function Amount({ value, unit }: { value: number | string; unit: string }) {
+  const perUnit = /^cents( per .+)?$/.exec(unit);
+  if (perUnit !== null && typeof value === 'number') {
+    return (
+      <>
+        {formatRate(value)} <span className={styles.unit}>{perUnit[1] ?? ''}</span>
+      </>
+    );
+  }
+  // More decimals than the figure itself, or the steps would not add up before the reader's eyes.
+  const shown = typeof value === 'number' ? formatNumber(value, 3) : value;
+  return (
+    <>
+      {shown} <span className={styles.unit}>{unit}</span>
+    </>
+  );
 }

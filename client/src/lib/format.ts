@@ -30,6 +30,16 @@ export function formatMoney(cents: number, options: { dropZeroCents?: boolean } 
   }).format(cents / 100);
 }
 
+/** `$2.90`, `$0.0425`: a rate in cents, which may have parts of a cent. */
+export function formatRate(cents: number): string {
+  return numberFormat({
+    style: 'currency',
+    currency: 'USD',
+    minimumFractionDigits: 2,
+    maximumFractionDigits: 4,
+  }).format(cents / 100);
+}
+
 /** A figure with at most `digits` decimals (one unless told), grouped by thousands. */
 export function formatNumber(value: number, digits = 1): string {
   return numberFormat({ maximumFractionDigits: digits }).format(value);

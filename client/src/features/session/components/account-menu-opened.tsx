@@ -11,7 +11,7 @@ export default function AccountMenuOpened({ me }: { me: MeView }) {
   const [theme, chooseTheme] = useTheme();
   const signOut = useSignOut();
   return (
-    <DropdownMenu.Root defaultOpen>
+    <DropdownMenu.Root defaultOpen modal={false}>
       <DropdownMenu.Trigger>
         <AccountButton me={me} />
       </DropdownMenu.Trigger>
