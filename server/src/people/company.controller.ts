@@ -8,6 +8,7 @@ import {
   type OwnCompanyView,
 } from '@kerfyard/common/people';
 import { CurrentActor, Needs, RequestOrigin, type Origin } from '../platform/auth/access.decorators.ts';
+import { Idempotent } from '../platform/idempotency/idempotent.decorator.ts';
 import { CompanyService } from './company.service.ts';
 
 @Controller('company')
@@ -32,6 +33,7 @@ export class CompanyController {
 
   @Post('crews')
   @Needs('company.edit')
+  @Idempotent()
   addCrew(
     @CurrentActor() actor: Actor,
     @Body({ schema: unitNameSchema }) input: NewUnit,
@@ -42,6 +44,7 @@ export class CompanyController {
 
   @Post('trucks')
   @Needs('company.edit')
+  @Idempotent()
   addTruck(
     @CurrentActor() actor: Actor,
     @Body({ schema: unitNameSchema }) input: NewUnit,

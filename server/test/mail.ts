@@ -1,0 +1,18 @@
+import { setTimeout as sleep } from 'node:timers/promises';
+
+export interface Mail {
+  subject: string;
+  text: string;
+  to: string[];
+}
+
+/** Mails to an address in the local mail stand-in, once at least `count` have come (within ten seconds). */
+export async function mailsTo(address: string, count = 1): Promise<Mail[]> {
+  const url = `${process.env.MAIL_URL}/api/messages?to=${encodeURIComponent(address)}`;
+  for (let tries = 0; tries < 100; tries += 1) {
+    const { messages } = (await (await fetch(url)).json()) as { messages: Mail[] };
+    if (messages.length >= count) return messages;
+    await sleep(100);
+  }
+  throw new Error(`fewer than ${count} mails came to ${address}`);
+}
