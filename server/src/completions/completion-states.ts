@@ -2,7 +2,11 @@ import { Injectable } from '@nestjs/common';
 import type { CompletionStatus } from '@kerfyard/common/completions';
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
-import { COMPLETE_SUBCONTRACT, COMPLETION_RELEASED, COMPLETION_WITH_LINES } from './completion-states.queries.ts';
+import {
+  COMPLETE_SUBCONTRACT,
+  COMPLETION_RELEASED,
+  COMPLETION_WITH_LINES,
+} from './completion-states.queries.ts';
 
 export interface CompletionState {
   id: string;
@@ -26,7 +30,12 @@ export class CompletionStates {
   async find(tx: Tx, completionId: string): Promise<CompletionState | null> {
     const row = await this.uow.row<Row>(tx, COMPLETION_WITH_LINES, [completionId]);
     if (row === null) return null;
-    return { id: row.id, subcontractId: row.subcontract_id, status: row.status, sovLineIds: row.sov_line_ids };
+    return {
+      id: row.id,
+      subcontractId: row.subcontract_id,
+      status: row.status,
+      sovLineIds: row.sov_line_ids,
+    };
   }
 
   /** accepted → released; the last line released completes the subcontract. */
