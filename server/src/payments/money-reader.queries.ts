@@ -21,6 +21,14 @@ export const RELEASED_LINES = `
   SELECT cl.sov_line_id FROM release r JOIN completion_line cl ON cl.completion_id = r.completion_id
   WHERE r.subcontract_id = $1`;
 
+/** Lines that hold money, or whose money has been released. */
+export const PAID_FOR_LINES = `
+  SELECT sov_line_id FROM ledger_account
+  WHERE subcontract_id = ANY ($1::uuid[]) AND code LIKE 'held:%' AND balance_cents < 0
+  UNION
+  SELECT cl.sov_line_id FROM release r JOIN completion_line cl ON cl.completion_id = r.completion_id
+  WHERE r.subcontract_id = ANY ($1::uuid[])`;
+
 /** A company's side of every entry, oldest first: one row per entry and account of its statement. */
 export const STATEMENT_LINES = `
   SELECT e.id AS entry_id, e.number, e.posted_at, e.event, a.code, p.amount_cents, s.id AS subcontract_id, s.number AS subcontract_number,

@@ -3,7 +3,7 @@ import type { FundingView, MoneyLineView, ReleaseView } from '@kerfyard/common/p
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { FUNDINGS_OF } from './fundings.queries.ts';
 import { presentFunding, type FundingRow } from './funding-views.ts';
-import { LINES_UNDER_WAY, MONEY_LINES, RELEASED_LINES, SET_ASIDE_LINES } from './money-reader.queries.ts';
+import { LINES_UNDER_WAY, MONEY_LINES, PAID_FOR_LINES, RELEASED_LINES, SET_ASIDE_LINES } from './money-reader.queries.ts';
 import { RELEASES_OF } from './releases.queries.ts';
 import { presentRelease, type ReleaseRow } from './release-views.ts';
 
@@ -58,6 +58,12 @@ export class MoneyReader {
 
   async releasedLineIds(subcontractId: string): Promise<Set<string>> {
     return this.lineIds(null, RELEASED_LINES, subcontractId);
+  }
+
+  /** Lines of many subcontracts that hold money now or have had it released, in one query. */
+  async paidForLineIds(subcontractIds: readonly string[]): Promise<Set<string>> {
+    const rows = await this.uow.rows<{ sov_line_id: string }>(null, PAID_FOR_LINES, [subcontractIds]);
+    return new Set(rows.map((row) => row.sov_line_id));
   }
 
   private async lineIds(tx: Tx | null, sql: string, subcontractId: string): Promise<Set<string>> {
