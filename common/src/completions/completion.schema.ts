@@ -35,3 +35,4 @@ export const submitCompletionSchema = z.strictObject({
   note: textSchema(2000, 0).default(''),
 });
 export type SubmitCompletion = z.output<typeof submitCompletionSchema>;
+export type SubmitCompletionInput = z.input<typeof submitCompletionSchema>;
