@@ -31,6 +31,8 @@ export async function startPaymentStandIn(config: StandInConfig): Promise<Runnin
       response.end();
     });
   });
+  // Longer than clients keep idle connections, so that none is cut just as it is used again.
+  server.keepAliveTimeout = 120_000;
   const port = await listen(server, config.port, config.host);
   const url = `http://${config.host}:${port}`;
   standIn.start(url);

@@ -189,30 +189,34 @@ export function createPlatformAccount(work: Work): AccountRecord {
 }
 
 function applyInput(api: Stripe.Account, input: SharedInput): void {
-  const { business_profile: profile, company, settings } = input;
-  if (profile) {
-    for (const [field, value] of Object.entries(profile))
-      Object.assign(api.business_profile!, { [field]: value || null });
+  for (const [field, value] of Object.entries(input.business_profile ?? {})) {
+    Object.assign(api.business_profile!, { [field]: value || null });
   }
-  if (company) {
-    api.company = { ...api.company, ...(company.name !== undefined && { name: company.name || null }) };
-    if (company.phone !== undefined) api.company.phone = company.phone || null;
-    if (company.address) api.company.address = { ...emptyAddress(), ...company.address };
-  }
+  if (input.company) applyCompany(api, input.company);
   if (input.business_type !== undefined) api.business_type = input.business_type;
   if (input.email !== undefined) api.email = input.email;
   if (input.default_currency !== undefined) api.default_currency = input.default_currency;
   api.metadata = mergeMetadata(api.metadata ?? {}, input.metadata);
-  const { payouts } = settings ?? {};
-  if (!payouts) return;
+  if (input.settings?.payouts) applyPayoutSettings(api, input.settings.payouts);
+}
+
+function applyCompany(api: Stripe.Account, company: NonNullable<SharedInput['company']>): void {
+  api.company ??= {};
+  if (company.name !== undefined) api.company.name = company.name || null;
+  if (company.phone !== undefined) api.company.phone = company.phone || null;
+  if (company.address) api.company.address = { ...emptyAddress(), ...company.address };
+}
+
+type PayoutSettings = NonNullable<NonNullable<SharedInput['settings']>['payouts']>;
+
+function applyPayoutSettings(api: Stripe.Account, change: PayoutSettings): void {
   const current = api.settings!.payouts!;
-  if (payouts.debit_negative_balances !== undefined)
-    current.debit_negative_balances = payouts.debit_negative_balances;
-  if (payouts.statement_descriptor !== undefined)
-    current.statement_descriptor = payouts.statement_descriptor || null;
-  if (payouts.schedule?.interval !== undefined) current.schedule.interval = payouts.schedule.interval;
-  const delay = payouts.schedule?.delay_days;
-  if (delay !== undefined) current.schedule.delay_days = delay === 'minimum' ? 2 : delay;
+  const { debit_negative_balances: isDebiting, statement_descriptor: descriptor, schedule } = change;
+  if (isDebiting !== undefined) current.debit_negative_balances = isDebiting;
+  if (descriptor !== undefined) current.statement_descriptor = descriptor || null;
+  if (schedule?.interval !== undefined) current.schedule.interval = schedule.interval;
+  if (schedule?.delay_days === undefined) return;
+  current.schedule.delay_days = schedule.delay_days === 'minimum' ? 2 : schedule.delay_days;
 }
 
 function emptyAddress(): Stripe.Address {
