@@ -1,4 +1,11 @@
 import { type DynamicModule, Module } from '@nestjs/common';
+import { CompletionsModule } from './completions/completions.module.ts';
+import { VisitsModule } from './visits/visits.module.ts';
+import { SubcontractsModule } from './subcontracts/subcontracts.module.ts';
+import { AwardsModule } from './awards/awards.module.ts';
+import { BidsModule } from './bids/bids.module.ts';
+import { ScopesModule } from './scopes/scopes.module.ts';
+import { PaymentsModule } from './payments/payments.module.ts';
 import { DemoModule } from './demo/demo.module.ts';
 import { FilesModule } from './files/files.module.ts';
 import { PeopleModule } from './people/people.module.ts';
@@ -18,6 +25,13 @@ const features: NonNullable<DynamicModule['imports']> = [
   PlacesModule,
   FilesModule,
   TalkModule,
+  ScopesModule,
+  BidsModule,
+  AwardsModule,
+  SubcontractsModule,
+  VisitsModule,
+  CompletionsModule,
+  PaymentsModule,
   DemoModule,
 ];
 
