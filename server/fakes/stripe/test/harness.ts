@@ -54,6 +54,11 @@ export class WebhookReceiver {
   }
 }
 
+export interface Standing {
+  available: number;
+  pending: number;
+}
+
 /** A stand-in on a free port with its own folder, an SDK pointed at it and an app that listens to its webhooks. */
 export class Harness {
   readonly receiver = new WebhookReceiver();
@@ -238,6 +243,39 @@ export class Harness {
       allowed_payment_method_types: ['card', 'us_bank_account'],
       ...extra,
     });
+  }
+
+  /** Available and pending cents, of the platform or a connected account. */
+  async standing(account?: string): Promise<Standing> {
+    const options = account ? { stripeAccount: account } : undefined;
+    const { available, pending } = await this.stripe.balance.retrieve({}, options);
+    const sum = (parts: Stripe.Balance.Available[]) => parts.reduce((total, part) => total + part.amount, 0);
+    return { available: sum(available), pending: sum(pending) };
+  }
+
+  /** All balance transactions, newest first. */
+  async movements(account?: string): Promise<Stripe.BalanceTransaction[]> {
+    const options = account ? { stripeAccount: account } : undefined;
+    const list = this.stripe.balanceTransactions.list({ limit: 100 }, options);
+    return list.autoPagingToArray({ limit: 10_000 });
+  }
+
+  /** A-08: the balance is the sum of the movements, side by side, and each movement adds up in itself. */
+  async expectBooksToAgree(account?: string): Promise<void> {
+    const all = await this.movements(account);
+    const sum = (status: string) =>
+      all.filter((one) => one.status === status).reduce((total, one) => total + one.net, 0);
+    expect(await this.standing(account)).toEqual({ available: sum('available'), pending: sum('pending') });
+    expect(all.filter((one) => one.net !== one.amount - one.fee)).toEqual([]);
+    const feesOf = (one: Stripe.BalanceTransaction) =>
+      one.fee_details.reduce((total, fee) => total + fee.amount, 0);
+    expect(all.filter((one) => feesOf(one) !== one.fee)).toEqual([]);
+  }
+
+  /** Moves the clock to the next Monday (or stays on one), so that business days are known. */
+  async startOnMonday(): Promise<void> {
+    const { now } = await this.control<{ now: string }>('GET', 'clock');
+    await this.advance({ days: (8 - new Date(now).getUTCDay()) % 7 });
   }
 
   /** Waits until a condition holds. Throws after `limitMs`. */
