@@ -32,7 +32,10 @@ export async function closeDatabase(): Promise<void> {
   await Promise.all(open.map((pool) => pool.end()));
 }
 
-/** Moves the app's clock (`app_now()`) by milliseconds; the spec moves it back. Wall time and sessions stay. */
+/**
+ * Moves the app's clock (`app_now()`) by milliseconds; the spec moves it back. It moves for every spec that runs at the
+ * same time as well, so move it by little, or give the row under test another time instead. Sessions go by real time.
+ */
 export async function moveClock(milliseconds: number): Promise<void> {
   await sql('UPDATE app_clock SET offset_ms = offset_ms + $1', [milliseconds], 'owner');
 }
