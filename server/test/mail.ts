@@ -16,3 +16,13 @@ export async function mailsTo(address: string, count = 1): Promise<Mail[]> {
   }
   throw new Error(`fewer than ${count} mails came to ${address}`);
 }
+
+/** The first mail to an address whose subject fits, once it has come (within ten seconds). */
+export async function mailTo(address: string, subject: RegExp): Promise<Mail> {
+  for (let tries = 0; tries < 100; tries += 1) {
+    const found = (await mailsTo(address, 0)).find((mail) => subject.test(mail.subject));
+    if (found !== undefined) return found;
+    await sleep(100);
+  }
+  throw new Error(`no mail like ${subject.source} came to ${address}`);
+}
