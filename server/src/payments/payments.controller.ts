@@ -24,7 +24,7 @@ import { Statements } from './statements.ts';
 const statementQuerySchema = z.strictObject({ subcontractId: idSchema.optional() });
 type StatementQuery = z.infer<typeof statementQuerySchema>;
 
-@Controller('api')
+@Controller()
 export class PaymentsController {
   constructor(
     private readonly setAside: SetAsideService,

@@ -4,7 +4,7 @@ import { Public } from '../platform/auth/access.decorators.ts';
 import { StripeEvents } from './stripe-events.ts';
 
 /** Where the provider tells what happened. Two endpoints, two secrets: ours, and connected accounts'. */
-@Controller('api/payments/webhooks')
+@Controller('payments/webhooks')
 export class WebhooksController {
   constructor(private readonly events: StripeEvents) {}
 
