@@ -43,9 +43,11 @@ export function useSignOut() {
   const client = useQueryClient();
   const navigate = useNavigate();
   return useMutation({
+    // The line closes first: the server would tell it that the session ended, and it would try to refresh it.
+    onMutate: () => line.disconnect(),
     mutationFn: postSignOut,
+    onError: () => void line.connect(),
     onSuccess: async () => {
-      line.disconnect();
       dropAllTails();
       sessionGate.know(null);
       client.setQueryData(sessionKeys.me, null);
