@@ -1,6 +1,7 @@
-// Times the cutting engine as other programs get it, so the package must be built first. Prints a table, then the
-// same as one line of JSON. Run: node common/bench/cutting.bench.mjs
+// Times the cutting engine as other programs get it, so the package must be built first. The default export is for
+// `npm run bench`; run by itself (node common/bench/cutting.bench.mjs) it prints the table and one line of JSON.
 import { cpus } from 'node:os';
+import { pathToFileURL } from 'node:url';
 import { cutSketch, jointPlan, piecePlan, takeoffCutList } from '@kerfyard/common/cutting';
 
 const removal = { densityPcf: 150, allowancePct: 10, maxPieceLb: 1_000, maxSideFt: 6 };
@@ -107,15 +108,26 @@ function time(run) {
     run();
     return performance.now() - started;
   }).sort((left, right) => left - right);
-  return { minMs: times[0], medianMs: times[Math.floor(rounds / 2)], maxMs: times[rounds - 1] };
+  const rounded = (ms) => Math.round(ms * 1_000) / 1_000;
+  return {
+    minMs: rounded(times[0]),
+    medianMs: rounded(times[Math.floor(rounds / 2)]),
+    maxMs: rounded(times[rounds - 1]),
+  };
 }
 
-const results = subjects.map(({ name, limitMs, run }) => ({ name, limitMs, ...time(run) }));
-const ms = (value) => value.toFixed(3).padStart(9);
-
-console.log(`${'min ms'.padStart(9)}${'median'.padStart(9)}${'max'.padStart(9)}  limit`);
-for (const { name, limitMs, minMs, medianMs, maxMs } of results) {
-  const limit = limitMs === undefined ? '     ' : String(limitMs).padStart(5);
-  console.log(`${ms(minMs)}${ms(medianMs)}${ms(maxMs)}  ${limit}  ${name}`);
+/** Min, median and max of 40 rounds after 5 to warm up, in milliseconds. */
+export default async function benchCutting() {
+  const rows = subjects.map(({ name, limitMs, run }) => {
+    const { minMs, medianMs, maxMs } = time(run);
+    return { name, minMs, medianMs, maxMs, limitMs: limitMs ?? null };
+  });
+  return { title: 'Cutting engine', rows };
 }
-console.log(JSON.stringify({ node: process.version, cpu: cpus()[0]?.model, rounds, results }));
+
+if (import.meta.url === pathToFileURL(process.argv[1] ?? '').href) {
+  const result = await benchCutting();
+  console.log(result.title);
+  console.table(result.rows);
+  console.log(JSON.stringify({ node: process.version, cpu: cpus()[0]?.model, rounds, ...result }));
+}

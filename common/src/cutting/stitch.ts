@@ -34,22 +34,33 @@ export const stitchPitchToleranceIn = 0.005;
  * @throws CuttingInputError also when the overlap is not less than the bit, or the run is shorter than one bit
  */
 export function stitchHoles(input: StitchInput): StitchHoles {
+  const run = checkStitch(input);
+  const layout = layOutStitch(run);
+  return { ...layout, working: stitchWorking(run, layout) };
+}
+
+/** The run, its fields checked. */
+export function checkStitch(input: StitchInput): StitchInput {
   const fields = checkObject(input, 'input');
   const limits = cutLimits.stitch;
   const bitDiameterIn = checkNumber(fields.bitDiameterIn, 'bitDiameterIn', limits.bitDiameterIn);
-  // Below a twentieth of the bit the holes would barely move on.
-  const overlapIn = checkNumber(fields.overlapIn, 'overlapIn', {
-    min: 0,
-    max: bitDiameterIn * 0.95,
-    unit: 'in',
-  });
-  const closed = checkBoolean(fields.closed, 'closed');
-  const lengthIn = checkNumber(fields.lengthIn, 'lengthIn', {
-    min: bitDiameterIn,
-    max: limits.lengthIn.max,
-    unit: 'in',
-  });
-  const depthIn = checkNumber(fields.depthIn, 'depthIn', limits.depthIn);
+  return {
+    bitDiameterIn,
+    // Above that the holes would barely move on.
+    overlapIn: checkNumber(fields.overlapIn, 'overlapIn', { min: 0, max: bitDiameterIn * 0.95, unit: 'in' }),
+    closed: checkBoolean(fields.closed, 'closed'),
+    lengthIn: checkNumber(fields.lengthIn, 'lengthIn', {
+      min: bitDiameterIn,
+      max: limits.lengthIn.max,
+      unit: 'in',
+    }),
+    depthIn: checkNumber(fields.depthIn, 'depthIn', limits.depthIn),
+  };
+}
+
+/** `stitchHoles` without its working, for a run already checked. */
+export function layOutStitch(run: StitchInput): Omit<StitchHoles, 'working'> {
+  const { lengthIn, bitDiameterIn, overlapIn, closed, depthIn } = run;
   // Never wider than the bit: touching holes leave no web, parted ones do.
   const widestPitchIn = Math.min(bitDiameterIn, bitDiameterIn - overlapIn + stitchPitchToleranceIn);
   const runIn = closed ? lengthIn : lengthIn - bitDiameterIn;
@@ -58,42 +69,44 @@ export function stitchHoles(input: StitchInput): StitchHoles {
   const pitchIn = gaps === 0 ? 0 : runIn / gaps;
   const radiusIn = bitDiameterIn / 2;
   const cuspIn = radiusIn - Math.sqrt(Math.max(0, radiusIn * radiusIn - (pitchIn * pitchIn) / 4));
-  const coreInches = holes * depthIn;
-  return {
-    holes,
-    pitchIn,
-    coreInches,
-    cuspIn,
-    working: [
-      {
-        label: 'Holes',
-        formula: closed ? '⌈P ÷ (Ø − overlap)⌉' : '⌈(L − Ø) ÷ (Ø − overlap)⌉ + 1',
-        inputs: [
-          put(closed ? 'P' : 'L', lengthIn, 'in'),
-          put('Ø', bitDiameterIn, 'in'),
-          put('overlap', overlapIn, 'in'),
-          put('pitch tolerance', stitchPitchToleranceIn, 'in'),
-        ],
-        value: holes,
-        unit: 'holes',
-        source: arithmetic,
-      },
-      {
-        label: 'Core-inches',
-        formula: 'holes × depth',
-        inputs: [put('holes', holes, ''), put('depth', depthIn, 'in')],
-        value: coreInches,
-        unit: 'core-in',
-        source: arithmetic,
-      },
-      {
-        label: 'Cusp between holes',
-        formula: 'R − √(R² − (pitch ÷ 2)²)',
-        inputs: [put('R', radiusIn, 'in'), put('pitch', pitchIn, 'in')],
-        value: cuspIn,
-        unit: 'in',
-        source: arithmetic,
-      },
-    ],
-  };
+  return { holes, pitchIn, coreInches: holes * depthIn, cuspIn };
+}
+
+export function stitchWorking(
+  run: StitchInput,
+  layout: Omit<StitchHoles, 'working'>,
+): readonly WorkingStep[] {
+  const { lengthIn, bitDiameterIn, overlapIn, closed, depthIn } = run;
+  const { holes, pitchIn, coreInches, cuspIn } = layout;
+  return [
+    {
+      label: 'Holes',
+      formula: closed ? '⌈P ÷ (Ø − overlap)⌉' : '⌈(L − Ø) ÷ (Ø − overlap)⌉ + 1',
+      inputs: [
+        put(closed ? 'P' : 'L', lengthIn, 'in'),
+        put('Ø', bitDiameterIn, 'in'),
+        put('overlap', overlapIn, 'in'),
+        put('pitch tolerance', stitchPitchToleranceIn, 'in'),
+      ],
+      value: holes,
+      unit: 'holes',
+      source: arithmetic,
+    },
+    {
+      label: 'Core-inches',
+      formula: 'holes × depth',
+      inputs: [put('holes', holes, ''), put('depth', depthIn, 'in')],
+      value: coreInches,
+      unit: 'core-in',
+      source: arithmetic,
+    },
+    {
+      label: 'Cusp between holes',
+      formula: 'R − √(R² − (pitch ÷ 2)²)',
+      inputs: [put('R', bitDiameterIn / 2, 'in'), put('pitch', pitchIn, 'in')],
+      value: cuspIn,
+      unit: 'in',
+      source: arithmetic,
+    },
+  ];
 }

@@ -1,34 +1,39 @@
-import { checkBoolean } from '../check.ts';
-import { stitchHoles } from '../stitch.ts';
+import { checkStitch, layOutStitch, stitchWorking } from '../stitch.ts';
 import type { CoreCut, CutTakeoff, StitchCut, WireCut } from '../types.ts';
 import { arithmetic, put, type WorkingStep } from '../working.ts';
-import { coreCuFt, coresOf, removed, takeoffOf, weightStep } from './quantities.ts';
+import { takeoffOf, weightStep } from './quantities.ts';
+import { cylinderCuFt } from '../weights.ts';
 
 export function takeoffCore(cut: CoreCut): CutTakeoff {
   const { diameterIn, depthIn, count } = cut;
   const coreInches = depthIn * count;
-  const cuFt = coreCuFt({ diameterIn, depthIn, holes: count });
+  const cuFt = cylinderCuFt(diameterIn, depthIn) * count;
   return takeoffOf(cut, {
-    ...coresOf({ diameterIn, holes: count, coreInches }),
-    ...removed(cuFt),
+    core: { diameterIn, holes: count, coreInches },
+    removedCuFt: cuFt,
     working: [coreInchesStep({ holes: count, depthIn }), weightStep(cuFt, undefined)],
   });
 }
 
 /** A stitched line: its holes, and the concrete they take out, laps counted once. */
 export function takeoffStitch(cut: StitchCut): CutTakeoff {
-  const closed = checkBoolean(cut.closed, 'closed');
-  const { holes, pitchIn, working } = stitchHoles(cut);
+  const run = checkStitch(cut);
+  const layout = layOutStitch(run);
+  const { holes, pitchIn } = layout;
   const { bitDiameterIn, depthIn, count } = cut;
-  const laps = closed ? holes : holes - 1;
+  const laps = run.closed ? holes : holes - 1;
   const lapSqIn = lapAreaSqIn(bitDiameterIn / 2, pitchIn);
   const holeSqIn = (Math.PI / 4) * bitDiameterIn * bitDiameterIn;
   const cuFt = ((holes * holeSqIn - laps * lapSqIn) * depthIn * count) / 1_728;
   const allHoles = holes * count;
   return takeoffOf(cut, {
-    ...coresOf({ diameterIn: bitDiameterIn, holes: allHoles, coreInches: allHoles * depthIn }),
-    ...removed(cuFt),
-    working: [...working, coreInchesStep({ holes: allHoles, depthIn }), weightStep(cuFt, undefined)],
+    core: { diameterIn: bitDiameterIn, holes: allHoles, coreInches: allHoles * depthIn },
+    removedCuFt: cuFt,
+    working: [
+      ...stitchWorking(run, layout),
+      coreInchesStep({ holes: allHoles, depthIn }),
+      weightStep(cuFt, undefined),
+    ],
   });
 }
 
@@ -36,7 +41,7 @@ export function takeoffStitch(cut: StitchCut): CutTakeoff {
 export function takeoffWire(cut: WireCut): CutTakeoff {
   const { areaSqFt, pilotCores, pilotDiameterIn, depthIn, count } = cut;
   const holes = pilotCores * count;
-  const cuFt = coreCuFt({ diameterIn: pilotDiameterIn, depthIn, holes });
+  const cuFt = cylinderCuFt(pilotDiameterIn, depthIn) * holes;
   const sawSqFt = areaSqFt * count;
   const faceStep: WorkingStep = {
     label: 'Cut face',
@@ -46,12 +51,11 @@ export function takeoffWire(cut: WireCut): CutTakeoff {
     unit: 'sq ft',
     source: arithmetic,
   };
-  const pilots =
-    holes === 0 ? {} : coresOf({ diameterIn: pilotDiameterIn, holes, coreInches: holes * depthIn });
+  const pilots = { diameterIn: pilotDiameterIn, holes, coreInches: holes * depthIn };
   return takeoffOf(cut, {
     sawSqFt,
-    ...pilots,
-    ...removed(cuFt),
+    core: holes === 0 ? undefined : pilots,
+    removedCuFt: cuFt,
     working:
       holes === 0 ? [faceStep] : [faceStep, coreInchesStep({ holes, depthIn }), weightStep(cuFt, undefined)],
   });

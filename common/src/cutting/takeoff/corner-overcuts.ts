@@ -21,6 +21,8 @@ for (const { diameterIn, reachIn } of bladeMounts.flatMap((mount) => bladeReach.
   deepestReachByDiameter.set(diameterIn, Math.max(reachIn, deepestReachByDiameter.get(diameterIn) ?? 0));
 }
 
+const unknownOvercut: CornerOvercut = { overcutIn: undefined, cautions: [noBladeCaution], working: [] };
+
 /** Overcut of a slab or wall by the blade named; a pass-through left out is 0, the longest overcut. */
 export function cornerOvercut(cut: {
   readonly thicknessIn: number;
@@ -28,7 +30,7 @@ export function cornerOvercut(cut: {
   readonly passThroughIn?: number | undefined;
 }): CornerOvercut {
   const { thicknessIn, bladeDiameterIn } = cut;
-  if (bladeDiameterIn === undefined) return { overcutIn: undefined, cautions: [noBladeCaution], working: [] };
+  if (bladeDiameterIn === undefined) return unknownOvercut;
   const passThroughIn = cut.passThroughIn ?? 0;
   const overcutIn = overcutOf({ bladeDiameterIn, thicknessIn, passThroughIn });
   const reachIn = deepestReachByDiameter.get(bladeDiameterIn);
@@ -40,21 +42,28 @@ export function cornerOvercut(cut: {
   };
 }
 
-/** Overcut feet of `ends` cut ends, times `count`, with its step. */
-export function overcutFeet({ overcutIn, ends, count }: { overcutIn: number; ends: number; count: number }): {
-  readonly overcutFt: number;
-  readonly step: WorkingStep;
-} {
-  const overcutFt = (overcutIn * ends * count) / 12;
+/** Overcut inches at each of `ends` cut ends, `count` times. */
+export interface CutEnds {
+  readonly overcutIn: number;
+  readonly ends: number;
+  readonly count: number;
+}
+
+export function overcutFeet({ overcutIn, ends, count }: CutEnds): number {
+  return (overcutIn * ends * count) / 12;
+}
+
+export function overcutFeetStep(cutEnds: CutEnds): WorkingStep {
   return {
-    overcutFt,
-    step: {
-      label: 'Overcuts',
-      formula: 'overcut × cut ends × count ÷ 12',
-      inputs: [put('overcut', overcutIn, 'in'), put('cut ends', ends, ''), put('count', count, '')],
-      value: overcutFt,
-      unit: 'ft',
-      source: arithmetic,
-    },
+    label: 'Overcuts',
+    formula: 'overcut × cut ends × count ÷ 12',
+    inputs: [
+      put('overcut', cutEnds.overcutIn, 'in'),
+      put('cut ends', cutEnds.ends, ''),
+      put('count', cutEnds.count, ''),
+    ],
+    value: overcutFeet(cutEnds),
+    unit: 'ft',
+    source: arithmetic,
   };
 }

@@ -14,12 +14,13 @@ import type {
   PipeCut,
 } from '../types.ts';
 import { arithmetic, put, type WorkingInput, type WorkingStep } from '../working.ts';
-import { inchFeetStep, removed, sawnTo, takeoffOf, weightStep } from './quantities.ts';
+import { inchFeetStep, takeoffOf, weightStep } from './quantities.ts';
 
 export function takeoffLine(cut: LineCut): CutTakeoff {
   const sawFt = cut.lengthFt * cut.count;
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, cut.depthIn),
+    sawFt,
+    depthIn: cut.depthIn,
     working: [lengthStep(cut, sawFt), inchFeetStep(sawFt, cut.depthIn)],
   });
 }
@@ -32,7 +33,8 @@ export function takeoffJoints(cut: JointsCut): CutTakeoff {
     put('count', cut.count, ''),
   ]);
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, plan.depthIn),
+    sawFt,
+    depthIn: plan.depthIn,
     working: [...plan.working, step, inchFeetStep(sawFt, plan.depthIn)],
   });
 }
@@ -41,7 +43,8 @@ export function takeoffJoints(cut: JointsCut): CutTakeoff {
 export function takeoffCurb(cut: CurbCut): CutTakeoff {
   const sawFt = cut.lengthFt * cut.count;
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, cut.heightIn),
+    sawFt,
+    depthIn: cut.heightIn,
     working: [lengthStep(cut, sawFt), inchFeetStep(sawFt, cut.heightIn)],
   });
 }
@@ -53,8 +56,9 @@ export function takeoffChase(cut: ChaseCut): CutTakeoff {
   const cuFt = ((lengthFt * widthIn * depthIn) / 144) * count;
   const step = sawFeetStep('2 × L × count', sawFt, [put('L', lengthFt, 'ft'), put('count', count, '')]);
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, depthIn),
-    ...removed(cuFt),
+    sawFt,
+    depthIn,
+    removedCuFt: cuFt,
     working: [step, inchFeetStep(sawFt, depthIn), weightStep(cuFt, undefined)],
   });
 }
@@ -67,7 +71,8 @@ export function takeoffBlock(cut: BlockCut): CutTakeoff {
     put('units', count, ''),
   ]);
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, depthIn),
+    sawFt,
+    depthIn,
     pieceCuts: count,
     working: [step, inchFeetStep(sawFt, depthIn)],
   });
@@ -88,7 +93,11 @@ export function takeoffBar(cut: BarCut): CutTakeoff {
     unit: 'sq ft',
     source: arithmetic,
   };
-  return takeoffOf(cut, { sawSqFt, pieceCuts: cut.count, working: [piecesStep(cut.count), faceStep] });
+  return takeoffOf(cut, {
+    sawSqFt,
+    pieceCuts: cut.count,
+    working: [piecesStep(cut.count), faceStep],
+  });
 }
 
 /** The blade runs the width of the lip, flat, as deep as the bevel or ramp is long; a wedge comes off. */
@@ -108,8 +117,9 @@ export function takeoffLip(cut: LipCut): CutTakeoff {
   const cuFt = ((widthFt * heightIn * cutLengthIn) / 2 / 144) * count;
   const step = sawFeetStep('W × count', sawFt, [put('W', widthFt, 'ft'), put('count', count, '')]);
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, cutLengthIn),
-    ...removed(cuFt),
+    sawFt,
+    depthIn: cutLengthIn,
+    removedCuFt: cuFt,
     working: [treatmentStep, step, inchFeetStep(sawFt, cutLengthIn), weightStep(cuFt, undefined)],
   });
 }

@@ -8,9 +8,9 @@ import {
   type OpeningSide,
 } from '../types.ts';
 import { arithmetic, put, type WorkingStep } from '../working.ts';
-import { cornerOvercut, overcutFeet } from './corner-overcuts.ts';
+import { cornerOvercut, overcutFeet, overcutFeetStep } from './corner-overcuts.ts';
 import { panelPieces } from './panel-pieces.ts';
-import { coresOf, inchFeetStep, removed, sawnTo, takeoffOf, weightStep } from './quantities.ts';
+import { inchFeetStep, takeoffOf, weightStep } from './quantities.ts';
 
 /** Perimeter, cross cuts and corners of an opening. */
 export function takeoffOpening(cut: OpeningCut): CutTakeoff {
@@ -35,16 +35,20 @@ export function takeoffOpening(cut: OpeningCut): CutTakeoff {
     source: arithmetic,
   };
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, thicknessIn),
+    sawFt,
+    depthIn: thicknessIn,
     crossCutFt,
     pieces: panel.pieces,
-    ...removed(removedCuFt, panel.densityPcf),
-    ...corners,
+    removedCuFt,
+    densityPcf: panel.densityPcf,
+    overcutFt: corners.overcutFt,
+    core: corners.core,
+    cautions: corners.cautions,
     working: [
       ...panel.working,
       sawStep,
       inchFeetStep(sawFt, thicknessIn),
-      ...(corners.working ?? []),
+      ...corners.working,
       weightStep(removedCuFt, panel.densityPcf),
     ],
   });
@@ -73,29 +77,40 @@ function cutPerimeterFt(cut: OpeningCut, uncut: ReadonlySet<OpeningSide>): numbe
   }, 0);
 }
 
+interface TreatedCorners {
+  readonly overcutFt: number;
+  readonly core: CoreGroup | undefined;
+  readonly cautions: readonly string[];
+  readonly working: readonly WorkingStep[];
+}
+
 /** Overcuts or corner cores, by the corner treatment; a square finish has neither. */
-function takeoffCorners(cut: OpeningCut, corners: number): Partial<Omit<CutTakeoff, 'kind' | 'count'>> {
+function takeoffCorners(cut: OpeningCut, corners: number): TreatedCorners {
   const treatment = checkChoice(cut.corners, 'corners', cornerTreatments);
-  const overcut = cornerOvercut(cut);
+  const { overcutIn, cautions, working } = cornerOvercut(cut);
   if (corners === 0 || treatment === 'square') {
-    return { cautions: overcut.overcutIn === undefined ? [] : overcut.cautions };
+    return { ...untreated, cautions: overcutIn === undefined ? [] : cautions };
   }
   if (treatment === 'overcut') {
-    const { overcutFt, step } = overcutFeet({
-      overcutIn: overcut.overcutIn ?? 0,
-      ends: 2 * corners,
-      count: cut.count,
-    });
-    const working = overcut.overcutIn === undefined ? [] : [...overcut.working, step];
-    return { overcutFt, cautions: overcut.cautions, working };
+    if (overcutIn === undefined) return { ...untreated, cautions };
+    const ends = { overcutIn, ends: 2 * corners, count: cut.count };
+    return {
+      overcutFt: overcutFeet(ends),
+      core: undefined,
+      cautions,
+      working: [...working, overcutFeetStep(ends)],
+    };
   }
-  const group = cornerCores(cut, corners, overcut.overcutIn);
+  const core = cornerCores(cut, corners, overcutIn);
   return {
-    ...coresOf(group),
-    cautions: overcut.overcutIn === undefined ? [noCornerCoreSize] : overcut.cautions,
-    working: [...overcut.working, cornerCoreStep(group, overcut.overcutIn)],
+    overcutFt: 0,
+    core,
+    cautions: overcutIn === undefined ? [noCornerCoreSize] : cautions,
+    working: [...working, cornerCoreStep(core, overcutIn)],
   };
 }
+
+const untreated = { overcutFt: 0, core: undefined, working: [] };
 
 export const noCornerCoreSize = 'The size of the corner cores is not known: no blade is named.';
 

@@ -5,11 +5,12 @@ import {
   brokenWebCaution,
   cornerOvercut,
   overcutFeet,
+  overcutFeetStep,
   shortCrossCutCaution,
   type CornerOvercut,
 } from './corner-overcuts.ts';
 import { panelPieces } from './panel-pieces.ts';
-import { inchFeetStep, removed, sawnTo, takeoffOf, weightStep } from './quantities.ts';
+import { inchFeetStep, takeoffOf, weightStep } from './quantities.ts';
 
 /** Sides, ends and cross cuts of a trench. */
 export function takeoffTrench(cut: TrenchCut): CutTakeoff {
@@ -21,7 +22,7 @@ export function takeoffTrench(cut: TrenchCut): CutTakeoff {
   const sawFt = (sideCuts * lengthFt + endCuts * widthFt) * count + crossCutFt;
   const cutEnds = 2 * sideCuts * endCuts;
   const corner = cornerOvercut(cut);
-  const overcut = overcutFeet({ overcutIn: corner.overcutIn ?? 0, ends: cutEnds, count });
+  const overcut = { overcutIn: corner.overcutIn ?? 0, ends: cutEnds, count };
   const removedCuFt = ((lengthFt * widthFt * thicknessIn) / 12) * count;
   const sawStep: WorkingStep = {
     label: 'Saw feet',
@@ -38,19 +39,20 @@ export function takeoffTrench(cut: TrenchCut): CutTakeoff {
     unit: 'ft',
     source: arithmetic,
   };
-  const overcutSteps = corner.overcutIn === undefined ? [] : [...corner.working, overcut.step];
   return takeoffOf(cut, {
-    ...sawnTo(sawFt, thicknessIn),
-    overcutFt: overcut.overcutFt,
+    sawFt,
+    depthIn: thicknessIn,
+    overcutFt: overcutFeet(overcut),
     crossCutFt,
     pieces: panel.pieces,
-    ...removed(removedCuFt, panel.densityPcf),
+    removedCuFt,
+    densityPcf: panel.densityPcf,
     cautions: trenchCautions({ corner, cutEnds, widthFt, hasCrossCuts: crossCutFt > 0 }),
     working: [
       ...panel.working,
       sawStep,
       inchFeetStep(sawFt, thicknessIn),
-      ...overcutSteps,
+      ...(corner.overcutIn === undefined ? [] : [...corner.working, overcutFeetStep(overcut)]),
       weightStep(removedCuFt, panel.densityPcf),
     ],
   });
