@@ -1,7 +1,14 @@
-import { Controller, Get, HttpStatus, Injectable, Res, type BeforeApplicationShutdown } from '@nestjs/common';
+import {
+  Controller,
+  Get,
+  HttpStatus,
+  Inject,
+  Injectable,
+  Res,
+  type BeforeApplicationShutdown,
+} from '@nestjs/common';
 import type { Response } from 'express';
 import { setTimeout as sleep } from 'node:timers/promises';
-import { Inject } from '@nestjs/common';
 import { Public } from '../auth/access.decorators.ts';
 import { Clock } from '../clock/clock.ts';
 import { CONFIG, type Config } from '../config/config.ts';
@@ -29,11 +36,18 @@ export class HealthController {
 
   @Get()
   @Public()
-  async health(@Res({ passthrough: true }) response: Response): Promise<{ status: string; now?: string }> {
-    if (this.readiness.isStopping) {
-      response.status(HttpStatus.SERVICE_UNAVAILABLE);
-      return { status: 'stopping' };
-    }
-    return { status: 'ok', now: (await this.clock.now()).toISOString() };
+  async health(
+    @Res({ passthrough: true }) response: Response,
+  ): Promise<{ status: 'ok' | 'stopping' | 'no_database' }> {
+    const status = this.readiness.isStopping ? 'stopping' : await this.databaseStatus();
+    if (status !== 'ok') response.status(HttpStatus.SERVICE_UNAVAILABLE);
+    return { status };
+  }
+
+  private databaseStatus(): Promise<'ok' | 'no_database'> {
+    return this.clock.now().then(
+      () => 'ok',
+      () => 'no_database',
+    );
   }
 }
