@@ -1,10 +1,10 @@
-import { useQuery, useQueryClient } from '@tanstack/react-query';
+import { useQuery } from '@tanstack/react-query';
 import { useEffect } from 'react';
 import { useTranslation } from 'react-i18next';
 import { useSearchParams } from 'react-router-dom';
 import { Page } from '../components/page.tsx';
 import { Loading, QueryErrorState } from '../components/states.tsx';
-import { companyKeys, companyQuery } from '../features/company/api/company.queries.ts';
+import { companyQuery, useReadPayouts } from '../features/company/api/company.queries.ts';
 import { CompanyForm } from '../features/company/components/company-form.tsx';
 import styles from '../features/company/components/company.module.css';
 import { Ladder } from '../features/company/components/ladder.tsx';
@@ -60,12 +60,12 @@ export default function CompanyPage() {
 
 /** Back from the payment provider's page: ask again how far the set-up is, then drop the mark from the address. */
 function useBackFromPayouts(): void {
-  const client = useQueryClient();
+  const { mutate: read } = useReadPayouts();
   const [search, setSearch] = useSearchParams();
   const isBack = search.has('payouts');
   useEffect(() => {
     if (!isBack) return;
-    void client.invalidateQueries({ queryKey: companyKeys.own });
+    read();
     setSearch({}, { replace: true });
-  }, [client, isBack, setSearch]);
+  }, [read, isBack, setSearch]);
 }

@@ -47,6 +47,15 @@ export function useAddUnit(kind: 'crews' | 'trucks') {
   });
 }
 
+/** Back from the provider's page: have the server read there how far the set-up is. */
+export function useReadPayouts() {
+  const client = useQueryClient();
+  return useMutation({
+    mutationFn: () => api.post<void>('/api/company/payouts/refresh'),
+    onSettled: () => client.invalidateQueries({ queryKey: companyKeys.own }),
+  });
+}
+
 /** Ask for the payment provider's set-up page and go there; it returns to `/company?payouts=back`. */
 export function useStartPayouts() {
   return useMutation({

@@ -29,8 +29,8 @@ export function Ladder({ company }: { company: OwnCompanyView }) {
               </StatusWord>
               {missing.length > 0 && (
                 <ul className={styles.missing}>
-                  {missing.map((item) => (
-                    <li key={item}>{words(item)}</li>
+                  {words(missing).map((item) => (
+                    <li key={item}>{item}</li>
                   ))}
                 </ul>
               )}

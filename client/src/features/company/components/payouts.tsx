@@ -35,8 +35,8 @@ export function Payouts({ payouts, canStart }: { payouts: OwnCompanyView['payout
       </Text>
       {payouts.missing.length > 0 && (
         <ul className={styles.missing}>
-          {payouts.missing.map((item) => (
-            <li key={item}>{missingWords(item)}</li>
+          {missingWords(payouts.missing).map((item) => (
+            <li key={item}>{item}</li>
           ))}
         </ul>
       )}
