@@ -10,9 +10,10 @@ import {
   signIn,
 } from './builders/people.ts';
 import { comeDue, linesBid, lumpBid, placeBid, publishScope } from './builders/scopes.ts';
-import { award, awardedWork, dueScope, viewWork } from './builders/work.ts';
+import { award, awardedWork, dueScope, viewWork } from './builders/awards.ts';
 import { Client } from './client.ts';
 import { closeDatabase, sql } from './database.ts';
+import { fileBytes } from './file-bytes.ts';
 import { openLine } from './live.ts';
 import { mailTo } from './mail.ts';
 import { readPdfText } from './pdf-text.ts';
@@ -24,19 +25,6 @@ const statuses = (answers: readonly { status: number }[]) =>
     (counts, { status }) => ({ ...counts, [status]: (counts[status] ?? 0) + 1 }),
     {},
   );
-
-async function bytesOf(client: Client, fileId: string): Promise<Buffer> {
-  const response = await client
-    .prepare('get', `/api/files/${fileId}`)
-    .buffer(true)
-    .parse((stream, done) => {
-      const chunks: Buffer[] = [];
-      stream.on('data', (chunk: Buffer) => chunks.push(chunk));
-      stream.on('end', () => done(null, Buffer.concat(chunks)));
-    });
-  expect(response.status).toBe(200);
-  return response.body as Buffer;
-}
 
 describe('awards', () => {
   afterAll(closeDatabase);
@@ -87,7 +75,7 @@ describe('awards', () => {
     const work = await awardedWork(812_345);
     const { document, number } = await viewWork(work.gc.owner, work.subcontractId);
     for (const person of [work.gc.owner, work.crew.owner]) {
-      const bytes = await bytesOf(person.client, document.fileId);
+      const bytes = await fileBytes(person.client, document.fileId);
       expect(createHash('sha256').update(bytes).digest('hex')).toBe(document.sha256);
       const text = (await readPdfText(bytes)).join(' ').replace(/\s+/g, ' ');
       for (const part of [
