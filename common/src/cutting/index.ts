@@ -8,7 +8,7 @@ export * from './tables/index.ts';
 export { inchFeet } from './inch-feet.ts';
 export { takeoffCut } from './takeoff/takeoff-cut.ts';
 export { takeoffCutList } from './takeoff/takeoff-cut-list.ts';
-export { piecePlan, type PiecePlan, type PiecePlanInput } from './pieces.ts';
+export { firstPullCaution, piecePlan, type PiecePlan, type PiecePlanInput } from './pieces.ts';
 export {
   cornerCoreDiameterIn,
   corePlacements,
@@ -53,6 +53,8 @@ export { explain } from './explain.ts';
 export { cutSketch, sketchNote, type CutSketch, type SketchedCut } from './drawing/cut-sketch.ts';
 export { describeCut, describeTakeoff } from './drawing/cut-words.ts';
 export * from './drawing/depth-section.ts';
+export * from './drawing/joint-sketch.ts';
+export * from './drawing/trench-section.ts';
 export type {
   Box,
   CircleRole,

@@ -5,6 +5,9 @@ import { compareNearly, isWithin, wholeUp } from './rounding.ts';
 import { reinforcedConcretePcf } from './tables/unit-weights.ts';
 import { arithmetic, put, type WorkingStep } from './working.ts';
 
+/** Shown beside every piece that is lifted; an allowance of 10 % is what forms offer for it. */
+export const firstPullCaution = 'The first pull is heavier than the piece: bond and kerf bind add to it.';
+
 export interface PiecePlanInput {
   readonly lengthFt: number;
   readonly widthFt: number;

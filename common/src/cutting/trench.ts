@@ -61,6 +61,8 @@ export interface TrenchPlan {
   readonly patchCuYd: number;
   /** With waste, up to the next quarter yard. */
   readonly patchOrderCuYd: number;
+  /** Outside diameter of the conduit. */
+  readonly conduitIn: number;
   readonly excavation: ExcavationRules;
   readonly cautions: readonly string[];
   readonly working: readonly WorkingStep[];
@@ -109,6 +111,7 @@ export function trenchPlan(input: TrenchPlanInput): TrenchPlan {
   const patchCuYd = concreteCuFt / cuFtPerCuYd;
   const plan = {
     coverIn,
+    conduitIn,
     digDepthIn,
     soilDepthIn,
     sawFt,
@@ -122,7 +125,7 @@ export function trenchPlan(input: TrenchPlanInput): TrenchPlan {
     excavation: excavationRules({ depthFt: digDepthIn / 12, soil: trench.soil }),
     cautions: trenchCautions(trench.location),
   };
-  return { ...plan, working: trenchWorking(plan, trench, conduitIn) };
+  return { ...plan, working: trenchWorking(plan, trench) };
 }
 
 /**
@@ -167,22 +170,12 @@ function trenchCautions(location: BurialLocation): readonly string[] {
   return [coverNote, ...slabNote, disturbedSoilNote];
 }
 
-function trenchWorking(
-  plan: Omit<TrenchPlan, 'working'>,
-  trench: CheckedTrench,
-  conduitIn: number,
-): readonly WorkingStep[] {
-  const { lengthFt, widthIn, slabThicknessIn } = trench;
+function trenchWorking(plan: Omit<TrenchPlan, 'working'>, trench: CheckedTrench): readonly WorkingStep[] {
+  return [...depthSteps(plan, trench), ...quantitySteps(plan, trench), ...plan.excavation.working];
+}
+
+function depthSteps(plan: Omit<TrenchPlan, 'working'>, trench: CheckedTrench): readonly WorkingStep[] {
   const isFromSurface = trench.coverFrom === 'finished_surface';
-  const length = put('L', lengthFt, 'ft');
-  const width = put('W', widthIn, 'in');
-  const slab = put('slab', slabThicknessIn, 'in');
-  const step = (
-    label: string,
-    formula: string,
-    inputs: WorkingStep['inputs'],
-    [value, unit]: readonly [number, string],
-  ): WorkingStep => ({ label, formula, inputs, value, unit, source: arithmetic });
   return [
     {
       label: 'Cover',
@@ -196,7 +189,7 @@ function trenchWorking(
       label: 'Conduit outside diameter',
       formula: 'table, by kind and trade size',
       inputs: [put('kind', trench.conduitKind, ''), put('trade size', trench.tradeSize, 'in')],
-      value: conduitIn,
+      value: plan.conduitIn,
       unit: 'in',
       source: sourceOf(conduitOutsideDiameters[trench.conduitKind].source),
     },
@@ -205,21 +198,36 @@ function trenchWorking(
       formula: isFromSurface ? 'max(cover, slab) + conduit + bedding' : 'slab + cover + conduit + bedding',
       inputs: [
         put('cover', plan.coverIn, 'in'),
-        slab,
-        put('conduit', conduitIn, 'in'),
+        put('slab', trench.slabThicknessIn, 'in'),
+        put('conduit', plan.conduitIn, 'in'),
         put('bedding', trench.beddingIn, 'in'),
       ],
       value: plan.digDepthIn,
       unit: 'in',
       source: isFromSurface ? sourceOf(minimumCover.source) : commonPractice,
     },
+  ];
+}
+
+function quantitySteps(plan: Omit<TrenchPlan, 'working'>, trench: CheckedTrench): readonly WorkingStep[] {
+  const length = put('L', trench.lengthFt, 'ft');
+  const width = put('W', trench.widthIn, 'in');
+  const slab = put('slab', trench.slabThicknessIn, 'in');
+  const concrete = put('concrete', plan.concreteCuFt, 'cu ft');
+  const step = (
+    label: string,
+    formula: string,
+    inputs: WorkingStep['inputs'],
+    [value, unit]: readonly [number, string],
+  ): WorkingStep => ({ label, formula, inputs, value, unit, source: arithmetic });
+  return [
     step('Saw feet', '2 × L + 2 × W ÷ 12', [length, width], [plan.sawFt, 'ft']),
     step('Inch-feet', 'saw feet × slab', [put('saw feet', plan.sawFt, 'ft'), slab], [plan.inchFeet, 'in-ft']),
     step('Concrete out', 'L × W × slab ÷ 144', [length, width, slab], [plan.concreteCuFt, 'cu ft']),
     step(
       'Weight out',
       'concrete × density ÷ 2,000',
-      [put('concrete', plan.concreteCuFt, 'cu ft'), put('density', trench.densityPcf, 'pcf')],
+      [concrete, put('density', trench.densityPcf, 'pcf')],
       [plan.concreteTons, 'tons'],
     ),
     step(
@@ -237,9 +245,8 @@ function trenchWorking(
     step(
       'Patch to order',
       'concrete ÷ 27 × (1 + waste), up to the next ¼ cu yd',
-      [put('concrete', plan.concreteCuFt, 'cu ft'), put('waste', trench.wastePct, '%')],
+      [concrete, put('waste', trench.wastePct, '%')],
       [plan.patchOrderCuYd, 'cu yd'],
     ),
-    ...plan.excavation.working,
   ];
 }

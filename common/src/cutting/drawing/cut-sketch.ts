@@ -75,7 +75,7 @@ export function cutSketch(
     bar,
     box: { x: 0, y: 0, width: rightFt, height: bar.line.from.y + gapFt },
     note: sketchNote,
-    text: sketchText(shown, takeoff.cuts, omitted),
+    text: sketchText(drawn, takeoff.cuts, omitted),
   };
 }
 
@@ -120,14 +120,15 @@ function scaleBar(boxes: readonly Box[], y: number, x: number): CutSketch['bar']
 }
 
 function sketchText(
-  shown: readonly Cut[],
+  drawn: readonly SketchedCut[],
   takeoffs: readonly CutTakeoff[],
   omitted: number,
 ): readonly string[] {
-  const sentences = shown.map((cut, index) => {
+  const sentences = drawn.map(({ index, words, isSimplified }) => {
     const takeoff = takeoffs[index];
     const quantities = takeoff === undefined ? '' : describeTakeoff(takeoff);
-    return `${index + 1}. ${describeCut(cut)}${quantities === '' ? '' : `: ${quantities}`}.`;
+    const simplified = isSimplified ? ' Drawn as its outline.' : '';
+    return `${index + 1}. ${words}${quantities === '' ? '' : `: ${quantities}`}.${simplified}`;
   });
   const rest = omitted === 0 ? [] : [`And ${inWords(omitted)} more cuts that are not drawn.`];
   return [...sentences, ...rest, sketchNote];

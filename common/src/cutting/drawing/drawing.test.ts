@@ -2,9 +2,11 @@ import { describe, expect, it } from 'vitest';
 import {
   cutSketch,
   depthSection,
+  jointSketch,
   overcutIn,
   passPlan,
   sketchNote,
+  trenchSection,
   type Cut,
   type LineRole,
   type OpeningCut,
@@ -226,5 +228,60 @@ describe('depthSection', () => {
     expect(() => depthSection({ ...slab, passDepthsIn: [2, 2] })).toThrow(
       expect.objectContaining({ field: 'passDepthsIn[1]' }),
     );
+  });
+});
+
+describe('jointSketch', () => {
+  it('draws every joint where the plan puts it, bay lines too', () => {
+    const sketch = jointSketch({
+      lengthFt: 60,
+      widthFt: 40,
+      thicknessIn: 4,
+      spacingFactor: 36,
+      baysAlongLengthFt: [25, 35],
+    });
+    const acrossFt = sketch.joints.filter(({ from, to }) => from.x === to.x).map(({ from }) => from.x);
+    expect(acrossFt).toContain(25);
+    expect(
+      Math.max(...[...acrossFt, 60].map((x, index) => x - (acrossFt[index - 1] ?? 0))),
+    ).toBeLessThanOrEqual(12);
+    expect(sketch.box).toEqual({ x: 0, y: 0, width: 60, height: 40 });
+    expect(sketch.text.join(' ')).toContain('ft of joints, 1 in deep');
+  });
+});
+
+describe('trenchSection', () => {
+  const input = {
+    lengthFt: 100,
+    widthIn: 24,
+    slabThicknessIn: 6,
+    location: 'under_roads_parking',
+    wiring: 'nonmetallic',
+    conduitKind: 'pvc',
+    tradeSize: '2',
+    beddingIn: 2,
+    swellPct: 25,
+  } as const;
+
+  it('puts the conduit under its cover and on its bedding', () => {
+    const section = trenchSection(input);
+    expect(section.conduit.centre.y - section.conduit.radiusIn).toBeCloseTo(24, 9);
+    expect(section.conduit.centre.y + section.conduit.radiusIn).toBeCloseTo(section.bedding?.y ?? 0, 9);
+    expect(section.trench.height).toBe(28.375);
+    expect(section.slabs.map(({ x, width }) => [x, x + width])).toEqual([
+      [0, 12],
+      [36, 48],
+    ]);
+    expect(section.text.join(' ')).toContain('dug 28.375 in deep');
+  });
+
+  it('measures cover from the underside where asked, and draws no bedding where there is none', () => {
+    const section = trenchSection({ ...input, beddingIn: 0, coverFrom: 'underside_of_slab' });
+    expect(section.bedding).toBeNull();
+    expect(section.dimensions.find(({ name }) => name === 'cover')).toEqual({
+      name: 'cover',
+      fromIn: 6,
+      toIn: 30,
+    });
   });
 });

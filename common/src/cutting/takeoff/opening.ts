@@ -43,7 +43,7 @@ export function takeoffOpening(cut: OpeningCut): CutTakeoff {
     densityPcf: panel.densityPcf,
     overcutFt: corners.overcutFt,
     core: corners.core,
-    cautions: corners.cautions,
+    cautions: [...corners.cautions, ...panel.cautions],
     working: [
       ...panel.working,
       sawStep,

@@ -1,6 +1,6 @@
 import { checkNumber, checkNumberOr, checkObject, within } from '../check.ts';
 import { removalLimits } from '../limits.ts';
-import { leastCutGrid } from '../pieces.ts';
+import { firstPullCaution, leastCutGrid } from '../pieces.ts';
 import type { PieceSummary, Removal } from '../types.ts';
 import { arithmetic, put, type WorkingStep } from '../working.ts';
 
@@ -9,10 +9,19 @@ export interface PanelPieces {
   readonly crossCutFt: number;
   readonly pieces: PieceSummary | null;
   readonly densityPcf: number | undefined;
+  readonly cautions: readonly string[];
   readonly working: readonly WorkingStep[];
 }
 
-const wholePanel: PanelPieces = { crossCutFt: 0, pieces: null, densityPcf: undefined, working: [] };
+const wholePanel: PanelPieces = {
+  crossCutFt: 0,
+  pieces: null,
+  densityPcf: undefined,
+  cautions: [],
+  working: [],
+};
+
+const pieceCautions = [firstPullCaution];
 
 /** Cross cuts and pieces of one opening or trench by its removal; none without one. */
 export function panelPieces(
@@ -55,6 +64,7 @@ function cutPanel(
     crossCutFt,
     pieces,
     densityPcf,
+    cautions: pieceCautions,
     working: piecesWorking(pieces, { lengthFt, widthFt, crossCutFt }),
   };
 }

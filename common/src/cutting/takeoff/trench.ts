@@ -47,7 +47,10 @@ export function takeoffTrench(cut: TrenchCut): CutTakeoff {
     pieces: panel.pieces,
     removedCuFt,
     densityPcf: panel.densityPcf,
-    cautions: trenchCautions({ corner, cutEnds, widthFt, hasCrossCuts: crossCutFt > 0 }),
+    cautions: [
+      ...trenchCautions({ corner, cutEnds, widthFt, hasCrossCuts: crossCutFt > 0 }),
+      ...panel.cautions,
+    ],
     working: [
       ...panel.working,
       sawStep,
