@@ -63,13 +63,16 @@ async function connect(): Promise<void> {
     wasLive = true;
     lastSeq.clear();
   });
-  opened.on('disconnect', () => setState(wanted ? 'reconnecting' : 'off'));
+  opened.on('disconnect', (reason) => {
+    setState(wanted ? 'reconnecting' : 'off');
+    // The server closed it: its session's access ran out, or the server is going down. The library leaves it at that.
+    if (reason === 'io server disconnect') void reopen(opened);
+  });
   opened.on('connect_error', () => {
     setState('reconnecting');
     // `active` means the library tries again by itself; after a refused handshake it does not.
     if (!opened.active) void reopen(opened);
   });
-  opened.on('session_ended', () => void reopen(opened));
   opened.on('hint', (hint) => {
     if (hasGap(hint)) emit({ kind: 'refresh' });
     emit({ kind: 'hint', hint });
@@ -79,7 +82,7 @@ async function connect(): Promise<void> {
 /** After a refusal: refresh the session, wait a little, try again. The wait keeps a refusing server from a storm. */
 async function reopen(refused: LiveSocket): Promise<void> {
   const renewed = await refreshSession().catch(() => true);
-  if (!wanted || socket !== refused) return;
+  if (!wanted || socket !== refused || refused.active) return;
   if (!renewed) {
     // The next request asks the person to sign in; `disconnect` and `connect` follow from that.
     wanted = false;

@@ -4,6 +4,7 @@ import { useTranslation } from 'react-i18next';
 import { useNavigate } from 'react-router-dom';
 import { paths } from '../../../lib/paths.ts';
 import { sessionGate } from '../../../lib/session-gate.ts';
+import { line } from '../../../lib/socket.ts';
 import { useBecome } from '../hooks/use-session.ts';
 import { SignInForm } from './sign-in-form.tsx';
 
@@ -24,6 +25,8 @@ export default function SignInAgainDialog() {
     }
     sessionGate.know({ userId: me.user.id, email: me.user.email });
     sessionGate.answer(true);
+    // The live line may have given up with the session; when it has not, this does nothing.
+    void line.connect();
   };
 
   return (
