@@ -15,16 +15,24 @@ const MAX_TRIES = 3;
  */
 @Injectable()
 export class UnitOfWork {
+  private readonly afterwards = new WeakMap<Tx, (() => void)[]>();
+
   constructor(@Inject(Sequelize) private readonly sequelize: Sequelize) {}
 
   /** Run in one READ COMMITTED transaction; deadlocks and serialization failures are tried at most three times. */
   async run<T>(work: (tx: Tx) => Promise<T>): Promise<T> {
     for (let attempt = 1; ; attempt += 1) {
+      const deeds: (() => void)[] = [];
       try {
-        return await this.sequelize.transaction(
+        const result = await this.sequelize.transaction(
           { isolationLevel: Transaction.ISOLATION_LEVELS.READ_COMMITTED },
-          work,
+          (tx) => {
+            this.afterwards.set(tx, deeds);
+            return work(tx);
+          },
         );
+        for (const deed of deeds) deed();
+        return result;
       } catch (error) {
         if (attempt < MAX_TRIES && RETRIED.has(sqlState(error))) {
           await sleep(Math.random() * 30 * attempt);
@@ -33,6 +41,11 @@ export class UnitOfWork {
         throw databaseErrorToAppError(error) ?? error;
       }
     }
+  }
+
+  /** Do something once `run` has committed, and not at all when it has not: for hints within this process only. */
+  afterCommit(tx: Tx, deed: () => void): void {
+    this.afterwards.get(tx)?.push(deed);
   }
 
   /**

@@ -2,7 +2,7 @@ import { Inject, Injectable, Logger, type OnApplicationShutdown } from '@nestjs/
 import PgBoss from 'pg-boss';
 import { Sequelize } from 'sequelize';
 import { CONFIG, type Config } from '../config/config.ts';
-import type { Tx } from '../database/unit-of-work.ts';
+import { UnitOfWork, type Tx } from '../database/unit-of-work.ts';
 import type { JobName, Jobs } from './queues.ts';
 
 interface SendOptions {
@@ -18,11 +18,13 @@ interface SendOptions {
 export class JobQueue implements OnApplicationShutdown {
   private readonly logger = new Logger(JobQueue.name);
   private readonly boss: PgBoss;
+  private readonly workers = new Map<JobName, string[]>();
   private started: Promise<unknown> | null = null;
 
   constructor(
     @Inject(CONFIG) config: Config,
     @Inject(Sequelize) private readonly sequelize: Sequelize,
+    private readonly uow: UnitOfWork,
   ) {
     this.boss = new PgBoss({
       connectionString: config.databaseUrl,
@@ -54,6 +56,12 @@ export class JobQueue implements OnApplicationShutdown {
       },
     };
     await this.boss.send(name, data, { ...options, db });
+    if (options.startAfter === undefined) this.uow.afterCommit(tx, () => this.wake(name));
+  }
+
+  /** Workers look by themselves every second; those of this process need not wait that long. */
+  private wake(name: JobName): void {
+    for (const id of this.workers.get(name) ?? []) this.boss.notifyWorker(id);
   }
 
   /** Handle jobs of one kind, one at a time per worker; a throw retries with back-off. */
@@ -64,9 +72,10 @@ export class JobQueue implements OnApplicationShutdown {
   ): Promise<void> {
     await this.start();
     for (let n = 0; n < workers; n += 1) {
-      await this.boss.work<Jobs[Name]>(name, { pollingIntervalSeconds: 0.5 }, async ([job]) => {
+      const id = await this.boss.work<Jobs[Name]>(name, { pollingIntervalSeconds: 1 }, async ([job]) => {
         if (job !== undefined) await handle(job.data);
       });
+      this.workers.set(name, [...(this.workers.get(name) ?? []), id]);
     }
   }
 
