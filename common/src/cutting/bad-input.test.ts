@@ -1,17 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { describeRefusals, errorOf, type Subject } from '../../test/engine-refusals.ts';
 import * as engine from './index.ts';
-
-const { CuttingInputError } = engine;
-
-interface Subject {
-  readonly calculate: (input: never) => unknown;
-  readonly input: object;
-  /** Numeric fields that must be there, by path, with what else than a positive number they take. */
-  readonly numbers: Readonly<Record<string, 'positive' | 'zero'>>;
-  /** Numeric fields that may be left out. */
-  readonly optional?: readonly string[];
-  readonly choices?: readonly string[];
-}
 
 const trenchPlanInput = {
   lengthFt: 10,
@@ -25,101 +14,7 @@ const trenchPlanInput = {
   swellPct: 25,
 };
 
-const removal = { densityPcf: 150, maxPieceLb: 500 };
-const count = { count: 'positive' } as const;
-
-function cutSubject(input: engine.Cut, numbers: Subject['numbers'], rest: Partial<Subject> = {}): Subject {
-  return {
-    calculate: engine.takeoffCut,
-    input,
-    numbers: { ...numbers, ...count },
-    choices: ['kind'],
-    ...rest,
-  };
-}
-
 const subjects: Readonly<Record<string, Subject>> = {
-  inchFeet: {
-    calculate: engine.inchFeet,
-    input: { lengthFt: 1, depthIn: 1 },
-    numbers: { lengthFt: 'positive', depthIn: 'positive' },
-  },
-  'takeoffCut line': cutSubject(
-    { kind: 'line', lengthFt: 1, depthIn: 1, count: 1 },
-    { lengthFt: 'positive', depthIn: 'positive' },
-  ),
-  'takeoffCut trench': cutSubject(
-    { kind: 'trench', lengthFt: 9, widthFt: 2, thicknessIn: 6, endCuts: 2, count: 1, removal },
-    {
-      lengthFt: 'positive',
-      widthFt: 'positive',
-      thicknessIn: 'positive',
-      'removal.densityPcf': 'positive',
-      'removal.maxPieceLb': 'positive',
-    },
-    {
-      optional: ['bladeDiameterIn', 'removal.allowancePct', 'removal.maxSideFt', 'removal.maxShortSideFt'],
-      choices: ['kind', 'endCuts', 'sideCuts'],
-    },
-  ),
-  'takeoffCut opening': cutSubject(
-    {
-      kind: 'opening',
-      lengthFt: 3,
-      widthFt: 7,
-      thicknessIn: 8,
-      corners: 'overcut',
-      bladeDiameterIn: 24,
-      passThroughIn: 1,
-      count: 1,
-    },
-    { lengthFt: 'positive', widthFt: 'positive', thicknessIn: 'positive' },
-    { optional: ['bladeDiameterIn', 'passThroughIn'], choices: ['kind', 'corners'] },
-  ),
-  'takeoffCut core': cutSubject(
-    { kind: 'core', diameterIn: 4, depthIn: 8, count: 1 },
-    { diameterIn: 'positive', depthIn: 'positive' },
-  ),
-  'takeoffCut stitch': cutSubject(
-    { kind: 'stitch', lengthIn: 40, bitDiameterIn: 4, overlapIn: 1, closed: true, depthIn: 8, count: 1 },
-    { lengthIn: 'positive', bitDiameterIn: 'positive', overlapIn: 'zero', depthIn: 'positive' },
-    { choices: ['kind', 'closed'] },
-  ),
-  'takeoffCut joints': cutSubject(
-    { kind: 'joints', lengthFt: 60, widthFt: 40, thicknessIn: 6, spacingFactor: 30, capFt: 15, count: 1 },
-    {
-      lengthFt: 'positive',
-      widthFt: 'positive',
-      thicknessIn: 'positive',
-      spacingFactor: 'positive',
-      capFt: 'positive',
-    },
-  ),
-  'takeoffCut wire': cutSubject(
-    { kind: 'wire', areaSqFt: 10, pilotCores: 2, pilotDiameterIn: 2, depthIn: 24, count: 1 },
-    { areaSqFt: 'positive', pilotCores: 'zero', pilotDiameterIn: 'positive', depthIn: 'positive' },
-  ),
-  'takeoffCut curb': cutSubject(
-    { kind: 'curb', lengthFt: 10, heightIn: 6, count: 1 },
-    { lengthFt: 'positive', heightIn: 'positive' },
-  ),
-  'takeoffCut chase': cutSubject(
-    { kind: 'chase', lengthFt: 10, widthIn: 1, depthIn: 1, count: 1 },
-    { lengthFt: 'positive', widthIn: 'positive', depthIn: 'positive' },
-  ),
-  'takeoffCut block': cutSubject(
-    { kind: 'block', cutLengthIn: 8, depthIn: 8, count: 1 },
-    { cutLengthIn: 'positive', depthIn: 'positive' },
-  ),
-  'takeoffCut pipe': cutSubject(
-    { kind: 'pipe', outsideDiameterIn: 8, count: 1 },
-    { outsideDiameterIn: 'positive' },
-  ),
-  'takeoffCut bar': cutSubject({ kind: 'bar', diameterIn: 0.625, count: 1 }, { diameterIn: 'positive' }),
-  'takeoffCut lip': cutSubject(
-    { kind: 'lip', widthFt: 4, heightIn: 1, runPerRise: 12, count: 1 },
-    { widthFt: 'positive', heightIn: 'positive', runPerRise: 'positive' },
-  ),
   piecePlan: {
     calculate: engine.piecePlan,
     input: { lengthFt: 8, widthFt: 4, thicknessIn: 8, maxPieceLb: 1_000 },
@@ -400,87 +295,9 @@ const subjects: Readonly<Record<string, Subject>> = {
   },
 };
 
-/** A copy of the input with the field at `path` replaced; a list's own name (`tasks`) is not part of it. */
-function withField(input: object, path: string, value: unknown): never {
-  const copy: unknown = structuredClone(input);
-  const keys = path.split(/[.[\]]+/).filter((key) => key !== '');
-  const inside = Array.isArray(copy) ? keys.slice(1) : keys;
-  let holder = copy as Record<string, unknown>;
-  for (const key of inside.slice(0, -1)) holder = holder[key] as Record<string, unknown>;
-  const last = inside.at(-1) ?? '';
-  if (value === undefined) delete holder[last];
-  else holder[last] = value;
-  return copy as never;
-}
-
-function errorOf(run: () => unknown): unknown {
-  try {
-    run();
-  } catch (error) {
-    return error;
-  }
-  return undefined;
-}
-
-function expectRefused(subject: Subject, field: string, value: unknown): void {
-  const error = errorOf(() => subject.calculate(withField(subject.input, field, value)));
-  const shown = `${field} = ${String(value)}`;
-  expect(error, shown).toBeInstanceOf(CuttingInputError);
-  if (!(error instanceof CuttingInputError)) return;
-  expect(error.field, shown).toBe(field);
-  expect(error.allowed, shown).not.toBe('');
-  expect(error.message, shown).toContain(field);
-}
-
-const notNumbers = [NaN, Infinity, -Infinity, 1e308, -1, '6', null, true, [], {}];
-
-describe.each(Object.entries(subjects))('%s', (_name, subject) => {
-  it('takes its good input', () => {
-    expect(() => subject.calculate(subject.input as never)).not.toThrow();
-  });
-
-  it('names every bad number', () => {
-    for (const [field, kind] of Object.entries(subject.numbers)) {
-      for (const value of [...notNumbers, undefined, ...(kind === 'positive' ? [0] : [])]) {
-        // A list given short of its first item is a good list.
-        if (value === undefined && field.endsWith(']')) continue;
-        expectRefused(subject, field, value);
-      }
-    }
-    for (const field of subject.optional ?? []) {
-      for (const value of notNumbers) expectRefused(subject, field, value);
-    }
-  });
-
-  it('names every bad choice', () => {
-    for (const field of subject.choices ?? []) {
-      for (const value of ['no such choice \u0000', NaN, 99.5, null]) {
-        const isText = /\.(id|trip|unit)$/.test(field);
-        if (isText && typeof value === 'string') continue;
-        const isMissingList = value === null && ['mats', 'embedded'].includes(field);
-        if (!isMissingList) expectRefused(subject, field, value);
-      }
-    }
-  });
-
-  it('refuses what is no input at all', () => {
-    for (const input of [undefined, null, 'text', 7]) {
-      expect(errorOf(() => subject.calculate(input as never))).toBeInstanceOf(CuttingInputError);
-    }
-  });
-});
+describeRefusals(subjects);
 
 describe('lists', () => {
-  const line: engine.Cut = { kind: 'line', lengthFt: 10, depthIn: 6, count: 1 };
-
-  it('a million cuts are refused at once, by name', () => {
-    const cuts = Array.from({ length: 1_000_000 }, () => line);
-    const started = performance.now();
-    const error = errorOf(() => engine.takeoffCutList({ cuts }));
-    expect(performance.now() - started).toBeLessThan(50);
-    expect(error).toMatchObject({ field: 'cuts', allowed: 'a list of at most 10,000' });
-  });
-
   it.each([
     ['silicaControls', engine.silicaControls, 'tasks'],
     ['noiseExposure', engine.noiseExposure, 'exposures'],
@@ -488,11 +305,6 @@ describe('lists', () => {
   ])('%s refuses a million entries', (_name, calculate, field) => {
     const entries = Array.from({ length: 1_000_000 }, () => ({}));
     expect(errorOf(() => (calculate as (list: unknown) => unknown)(entries))).toMatchObject({ field });
-  });
-
-  it('an unknown kind of cut is named', () => {
-    const error = errorOf(() => engine.takeoffCut({ ...line, kind: 'notch' } as unknown as engine.Cut));
-    expect(error).toMatchObject({ field: 'kind', given: 'notch' });
   });
 });
 
