@@ -97,7 +97,7 @@ describe('bids on a sealed scope', () => {
   it('refuse a total, amounts that are no whole cents, and unknown fields (D-07)', async () => {
     const faulty: object[] = [
       { ...lumpBid(5_000), totalCents: 1 },
-      ...[-1, 0, 0.1, 1e309, 2 ** 53, '5000', '1e3', null].map((lumpCents) => ({
+      ...[-1, 0, 0.1, 2 ** 53, '5000', '1e3', null].map((lumpCents) => ({
         ...lumpBid(5_000),
         price: { form: 'lump', lumpCents },
       })),
@@ -105,6 +105,9 @@ describe('bids on a sealed scope', () => {
       { ...lumpBid(5_000), companyId: rival.id },
     ];
     for (const body of faulty) expect((await put(crew, body)).status).toBe(422);
+    const infinite = JSON.stringify(lumpBid(5_000)).replace('5000', '1e309');
+    const sending = crew.owner.client.prepare('put', `/api/scopes/${scope.id}/own-bid`);
+    expect((await sending.type('json').send(infinite)).status).toBe(422);
     expect(await own(crew)).toBeNull();
   });
 

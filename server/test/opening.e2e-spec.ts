@@ -6,6 +6,7 @@ import type { BidTabulationView } from '@kerfyard/common/bids';
 import type { ErrorBody } from '@kerfyard/common/errors';
 import type { ScopeDetailView } from '@kerfyard/common/scopes';
 import { closeDatabase, sql } from './database.ts';
+import { waitFor } from './wait.ts';
 import {
   expectStatus,
   makeCuttingContractor,
@@ -142,19 +143,13 @@ describe('the opening of sealed bids', () => {
   it('happens by itself at due, without anyone asking', async () => {
     const scope = await publishScope(gc, { dueAt: new Date(Date.now() + 1_500).toISOString() });
     await placeBid(crew(0), scope.id, lumpBid(410_000));
-    const opened = await until(async () => {
-      const rows = await rowsOf(scope.id);
-      return rows.length === 1 ? rows : null;
-    });
-    expect(opened).toMatchObject([{ total_cents: '410000', status: 'opened' }]);
-    const mails = await until(async () => {
-      const rows = await sql(
-        `SELECT 1 FROM pgboss.job WHERE name = 'send_mail' AND data->>'kind' = 'bids_due' AND data->>'scopeId' = $1`,
-        [scope.id],
-        'super',
-      );
-      return rows.length > 0 ? rows : null;
-    });
+    await waitFor(async () => (await rowsOf(scope.id)).length === 1, 10_000);
+    expect(await rowsOf(scope.id)).toMatchObject([{ total_cents: '410000', status: 'opened' }]);
+    const mails = await sql(
+      `SELECT 1 FROM pgboss.job WHERE name = 'send_mail' AND data->>'kind' = 'bids_due' AND data->>'scopeId' = $1`,
+      [scope.id],
+      'super',
+    );
     expect(mails).toHaveLength(1);
   });
 
@@ -167,7 +162,7 @@ describe('the opening of sealed bids', () => {
       'super',
     );
     // The early job is done and has been put off to the due time that stands.
-    await until(async () => {
+    await waitFor(async () => {
       const jobs = await sql<{ state: string; early: boolean }>(
         `SELECT state, start_after < now() + interval '1 day' AS early FROM pgboss.job
          WHERE name = 'come_due' AND data->>'scopeId' = $1`,
@@ -175,8 +170,8 @@ describe('the opening of sealed bids', () => {
         'super',
       );
       const isPutOff = jobs.some((job) => job.state === 'created' && !job.early);
-      return jobs.length === 2 && isPutOff ? jobs : null;
-    });
+      return jobs.length === 2 && isPutOff;
+    }, 10_000);
     expect(await rowsOf(scope.id)).toEqual([]);
     const answer = await tabulation(scope.id);
     expect(answer.body).toMatchObject({ status: 'open', count: 1, bids: [] });
@@ -276,12 +271,3 @@ describe('the opening of sealed bids', () => {
     expect(await sql('SELECT 1 FROM sealed_bid WHERE scope_id = $1', [scope.id])).toEqual([]);
   });
 });
-
-async function until<T>(look: () => Promise<T | null>): Promise<T> {
-  for (let tries = 0; tries < 100; tries += 1) {
-    const found = await look();
-    if (found !== null) return found;
-    await sleep(100);
-  }
-  throw new Error('It did not happen within ten seconds');
-}

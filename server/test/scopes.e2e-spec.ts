@@ -1,9 +1,12 @@
 import { randomUUID } from 'node:crypto';
+import sharp from 'sharp';
+import type { FileView, UploadResult } from '@kerfyard/common/files';
 import type { OwnScopeView, ScopeDetailView } from '@kerfyard/common/scopes';
 import type { ErrorBody } from '@kerfyard/common/errors';
 import { Client } from './client.ts';
 import { closeDatabase, sql } from './database.ts';
 import { openLine } from './live.ts';
+import { waitFor } from './wait.ts';
 import {
   addPerson,
   makeCuttingContractor,
@@ -252,7 +255,7 @@ describe('scopes', () => {
             'super',
           )
         ).map((row) => row.to);
-      await until(async () => (await mailed()).includes(crew.owner.userId));
+      await waitFor(async () => (await mailed()).includes(crew.owner.userId), 10_000);
       const to = await mailed();
       expect(to).not.toContain(farCrew.owner.userId);
       expect(to).not.toContain(wireOnly.owner.userId);
@@ -287,6 +290,49 @@ describe('scopes', () => {
     });
   });
 
+  describe('photos and drawings', () => {
+    const upload = async (company: Pick<Company, 'owner'>): Promise<FileView> => {
+      const create = { width: 40, height: 30, channels: 3 as const, background: '#888' };
+      const bytes = await sharp({ create }).png().toBuffer();
+      const sending = company.owner.client.prepare('post', '/api/files').field('kind', 'photo');
+      const response = await sending.attach('files', bytes, {
+        filename: 'wall.png',
+        contentType: 'image/png',
+      });
+      const [file] = (response.body as UploadResult).files;
+      if (file === undefined) throw new Error(response.text);
+      return file;
+    };
+
+    it('are the company’s own, hang on a draft with captions and go with it to those who may see it', async () => {
+      const [one, two, foreign] = await Promise.all([upload(gc), upload(gc), upload(otherGc)]);
+      const draft = await makeDraft(gc);
+      const files = `/api/scopes/${draft.id}/files`;
+      const attach = (fileId: string, caption: string) => gc.owner.client.post(files, { fileId, caption });
+      await expectStatus(attach(one.id, 'North face'), 201);
+      await expectStatus(attach(two.id, ''), 201);
+      const again = await expectStatus(attach(one.id, 'North face, wet'), 201);
+      expect((again.body as FileView[]).map((file) => [file.id, file.caption])).toEqual([
+        [one.id, 'North face, wet'],
+        [two.id, ''],
+      ]);
+      expect(fieldsOf(await attach(foreign.id, ''))).toEqual(['fileId']);
+      expect(fieldsOf(await attach(randomUUID(), ''))).toEqual(['fileId']);
+      expect((await gc.owner.client.delete(`${files}/${two.id}`)).status).toBe(204);
+      const read = (company: Pick<Company, 'owner'>) => company.owner.client.get(`/api/files/${one.id}`);
+      expect((await read(crew)).status).toBe(404);
+      await expectStatus(gc.owner.client.post(`/api/scopes/${draft.id}/publish`, { version: 1 }), 200);
+      expect((await view(crew, draft.id)).files).toMatchObject([{ id: one.id, caption: 'North face, wet' }]);
+      expect((await view(farCrew, draft.id)).files).toEqual([]);
+      expect((await read(crew)).status).toBe(200);
+      expect((await read(farCrew)).status).toBe(404);
+      expect((await read(otherGc)).status).toBe(404);
+      expect(codeOf(await attach(two.id, ''))).toBe('illegal_move');
+      expect(codeOf(await gc.owner.client.delete(`${files}/${one.id}`))).toBe('illegal_move');
+      expect((await otherGc.owner.client.post(files, { fileId: foreign.id })).status).toBe(404);
+    });
+  });
+
   describe('ending without an award', () => {
     it('withdraws from open and from due, once, and only its own', async () => {
       const scope = await publishScope(gc);
@@ -315,12 +361,3 @@ describe('scopes', () => {
     });
   });
 });
-
-/** Wait for something a job does. */
-async function until(isTrue: () => Promise<boolean>): Promise<void> {
-  for (let tries = 0; tries < 100; tries += 1) {
-    if (await isTrue()) return;
-    await new Promise((resolve) => setTimeout(resolve, 100));
-  }
-  throw new Error('It did not happen within ten seconds');
-}

@@ -1,4 +1,7 @@
+import { KeyVault } from '../platform/crypto/key-vault.ts';
 import { newKey } from '../platform/crypto/sealing.ts';
+import type { Config } from '../platform/config/config.ts';
+import { scopeKeyContext } from '../scopes/scope-key-context.ts';
 import { openBid, readDraft, readOwnBid, sealBid, sealDraft, type BidContent } from './bid-envelope.ts';
 import { newScopeKeyPair } from './scope-keys.ts';
 
@@ -39,6 +42,16 @@ describe('a sealed bid', () => {
     expect(() => openBid(sealed, identity, newScopeKeyPair())).toThrow();
     expect(() => openBid(sealed, identity, { ...newScopeKeyPair(), publicKey: pair.publicKey })).toThrow();
     expect(() => readOwnBid(sealed, identity, newKey())).toThrow();
+  });
+
+  it('stays shut without the master key that wraps the scope’s private half', () => {
+    const vault = () => new KeyVault({ masterKey: newKey() } as Config);
+    const right = vault();
+    const wrapped = right.wrapKey(pair.privateKey, scopeKeyContext('scope-1'));
+    const unwrapped = right.unwrapKey(wrapped, scopeKeyContext('scope-1'));
+    expect(openBid(sealed, identity, { ...pair, privateKey: unwrapped })).toEqual(contentOf(739_184_627));
+    expect(() => vault().unwrapKey(wrapped, scopeKeyContext('scope-1'))).toThrow();
+    expect(() => right.unwrapKey(wrapped, scopeKeyContext('scope-2'))).toThrow();
   });
 
   it('cannot pose as another bid, another company’s or another scope’s', () => {

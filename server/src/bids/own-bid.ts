@@ -9,17 +9,15 @@ import {
   type PricedBid,
 } from '@kerfyard/common/bids';
 import type { Actor } from '@kerfyard/common/people';
-import type { BiddingMode } from '@kerfyard/common/scopes';
 import { toInstant } from '../platform/database/codecs.ts';
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
 import { requireCompany } from '../scopes/require-company.ts';
 import { ScopeAccess } from '../scopes/scope-access.ts';
-import { ScopeReader } from '../scopes/scope-reader.ts';
 import { readOwnBid } from './bid-envelope.ts';
 import { CompanyKeys } from './company-keys.ts';
 import { READABLE_BID, SEALED_BID } from './own-bid.queries.ts';
-import { OwnMarks } from './own-marks.ts';
+import { OwnMarks, type OwnMark } from './own-marks.ts';
 
 /** A crew's own bid in the clear, wherever it lies. */
 export interface OwnBid {
@@ -65,7 +63,6 @@ export class OwnBids {
   constructor(
     private readonly uow: UnitOfWork,
     private readonly access: ScopeAccess,
-    private readonly reader: ScopeReader,
     private readonly keys: CompanyKeys,
     private readonly marks: OwnMarks,
   ) {}
@@ -77,12 +74,16 @@ export class OwnBids {
   async view(actor: Actor, scopeId: string): Promise<OwnBidView | null> {
     const company = requireCompany(actor, 'cutting_contractor');
     if ((await this.access.sight(actor, scopeId)) === 'nothing') throw new AppError('not_found');
-    const [bid, { scope }, marks] = await Promise.all([
-      this.find(null, scopeId, company.id),
-      this.reader.published(scopeId),
-      this.marks.of(company.id, [scopeId]),
+    return this.viewOf(company.id, scopeId);
+  }
+
+  /** The same for a company whose access has been checked. */
+  async viewOf(companyId: string, scopeId: string): Promise<OwnBidView | null> {
+    const [bid, marks] = await Promise.all([
+      this.find(null, scopeId, companyId),
+      this.marks.of(companyId, [scopeId]),
     ]);
-    return bid === null ? null : toView(bid, scope.mode ?? 'sealed', marks.get(scopeId));
+    return bid === null ? null : toView(bid, marks.get(scopeId));
   }
 
   /** The bid of one company on one scope, in the clear. */
@@ -109,11 +110,7 @@ export function toOutcome(row: OutcomeColumns): BidOutcome | null {
   return { won, rank, of, band, reason, note: note ?? '' };
 }
 
-function toView(
-  bid: OwnBid,
-  mode: BiddingMode,
-  mark: { rank: number | null; of: number | null } | undefined,
-): OwnBidView {
+function toView(bid: OwnBid, mark: OwnMark | undefined): OwnBidView {
   return {
     id: bid.id,
     status: bid.status,
@@ -123,7 +120,7 @@ function toView(
     version: bid.version,
     rank: mark?.rank ?? null,
     of: mark?.of ?? null,
-    revisionsLeft: mode === 'ranked' ? Math.max(0, rankedRules.maxRevisions - (bid.version - 1)) : null,
+    revisionsLeft: mark?.mode === 'ranked' ? Math.max(0, rankedRules.maxRevisions - (bid.version - 1)) : null,
     outcome: bid.outcome,
   };
 }

@@ -6,6 +6,7 @@ import { UnitOfWork } from '../platform/database/unit-of-work.ts';
 import { OWN_MARKS } from './bid-core.queries.ts';
 
 export interface OwnMark {
+  mode: BiddingMode | null;
   status: 'draft' | 'in' | 'withdrawn' | 'opened';
   rank: number | null;
   of: number | null;
@@ -31,7 +32,9 @@ export class OwnMarks {
     return new Map(
       rows.flatMap((row) => {
         const status = row.status ?? (row.has_draft ? 'draft' : null);
-        return status === null ? [] : [[row.scope_id, { status, ...shownRank(row) }] as const];
+        return status === null
+          ? []
+          : [[row.scope_id, { mode: row.mode, status, ...shownRank(row) }] as const];
       }),
     );
   }

@@ -68,7 +68,7 @@ export class SubmitBid {
     const content = await this.price(scopeId, input);
     const placed = await this.uow.run((tx) => this.place(tx, { actor, origin, scopeId, content }));
     if (placed !== null) this.tell(scopeId, placed);
-    const view = await this.ownBids.view(actor, scopeId);
+    const view = await this.ownBids.viewOf(company.id, scopeId);
     if (view === null) throw new Error('A bid that was handed in is not there');
     return view;
   }

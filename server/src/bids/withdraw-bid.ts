@@ -54,7 +54,7 @@ export class WithdrawBid {
     });
     this.events.bidsChanged({ id: scopeId, companyId: gcId }, bidSeq);
     this.events.ownBidsChanged(scopeId, hearers);
-    const view = await this.ownBids.view(actor, scopeId);
+    const view = await this.ownBids.viewOf(company.id, scopeId);
     if (view === null) throw new AppError('not_found');
     return view;
   }

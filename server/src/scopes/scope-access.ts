@@ -31,8 +31,7 @@ export class ScopeAccess {
   async sight(actor: Actor, scopeId: string): Promise<Sight> {
     if (actor.company === null) return 'nothing';
     const isCrew = actor.company.kind === 'cutting_contractor';
-    const place = isCrew ? (await this.yard(actor.company.id)).place : null;
-    const row = await this.uow.row<SightRow>(null, SIGHT, [scopeId, actor.company.id, place]);
+    const row = await this.uow.row<SightRow>(null, SIGHT, [scopeId, actor.company.id]);
     if (row === null || row.status === 'discarded') return 'nothing';
     if (row.company_id === actor.company.id) return 'own';
     if (!isCrew || row.status === 'draft') return 'nothing';

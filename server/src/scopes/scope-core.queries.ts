@@ -25,18 +25,25 @@ export const MOVE_SCOPE = `
 
 /**
  * How much of a scope a cutting contractor may see: `sees_all` with a yard within whose service radius the site
- * lies, or with an own bid, thread or subcontract. $1 scope, $2 company, $3 the yard as a point or null.
+ * lies, or with an own bid, thread or subcontract. $1 scope, $2 company.
  */
 export const SIGHT = `
   SELECT s.company_id, s.status,
-    coalesce(
-      2 * 3958.8 * asin(least(1, (s.place <-> $3::cube) / 2))
-        <= (SELECT service_radius_mi FROM company WHERE id = $2), false)
+    coalesce(2 * 3958.8 * asin(least(1, (s.place <-> y.place) / 2)) <= y.service_radius_mi, false)
     OR EXISTS (SELECT FROM sealed_bid b WHERE b.scope_id = s.id AND b.company_id = $2)
     OR EXISTS (SELECT FROM bid b WHERE b.scope_id = s.id AND b.company_id = $2)
     OR EXISTS (SELECT FROM thread t WHERE t.scope_id = s.id AND t.crew_company_id = $2)
     OR EXISTS (SELECT FROM subcontract c WHERE c.scope_id = s.id AND c.crew_company_id = $2) AS sees_all
-  FROM scope s WHERE s.id = $1`;
+  FROM scope s
+  LEFT JOIN LATERAL (
+    SELECT c.service_radius_mi, CASE WHEN c.yard_lat IS NOT NULL AND c.yard_lon IS NOT NULL THEN cube(ARRAY[
+        cos(radians(c.yard_lat)) * cos(radians(c.yard_lon)),
+        cos(radians(c.yard_lat)) * sin(radians(c.yard_lon)),
+        sin(radians(c.yard_lat))
+      ]) END AS place
+    FROM company c WHERE c.id = $2
+  ) y ON true
+  WHERE s.id = $1`;
 
 export const YARD = `SELECT yard_lat, yard_lon, service_radius_mi, methods FROM company WHERE id = $1`;
 
