@@ -74,6 +74,8 @@ export class JobQueue implements OnApplicationShutdown {
     for (let n = 0; n < workers; n += 1) {
       const id = await this.boss.work<Jobs[Name]>(name, { pollingIntervalSeconds: 1 }, async ([job]) => {
         if (job !== undefined) await handle(job.data);
+        // Where one waited there may be more: a backlog is worked off without a pause between its jobs.
+        this.boss.notifyWorker(id);
       });
       this.workers.set(name, [...(this.workers.get(name) ?? []), id]);
     }
