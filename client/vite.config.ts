@@ -1,11 +1,15 @@
+import { fileURLToPath } from 'node:url';
 import react from '@vitejs/plugin-react';
 import { defaultClientConditions } from 'vite';
 import { defineConfig } from 'vitest/config';
+import { leanThemeCss } from './scripts/lean-theme-css.ts';
 
 const api = process.env.API_URL ?? 'http://127.0.0.1:4600';
 
+const source = fileURLToPath(new URL('./src', import.meta.url));
+
 export default defineConfig({
-  plugins: [react()],
+  plugins: [react(), leanThemeCss(source)],
   resolve: { conditions: ['@kerfyard/source', ...defaultClientConditions] },
   ssr: { resolve: { conditions: ['@kerfyard/source'] } },
   server: {
