@@ -20,6 +20,7 @@ import {
   SignedIn,
   type Origin,
 } from '../platform/auth/access.decorators.ts';
+import { Idempotent } from '../platform/idempotency/idempotent.decorator.ts';
 import { ReadFile } from './read-file.ts';
 import { UploadFiles } from './upload-files.ts';
 import { fileQuerySchema, readUploadFields, type FileQuery } from './upload.schema.ts';
@@ -34,6 +35,8 @@ export class FilesController {
 
   @Post()
   @Needs('file.upload')
+  // The body is read first, so that the key is held against it.
+  @Idempotent()
   @UseInterceptors(UploadInterceptor)
   upload(
     @CurrentActor() actor: Actor,

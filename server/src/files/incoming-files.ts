@@ -1,5 +1,6 @@
 import type { Request } from 'express';
 import type { StorageEngine } from 'multer';
+import { createHash } from 'node:crypto';
 import { open, rm } from 'node:fs/promises';
 import { fileLimits } from '@kerfyard/common/files';
 import type { Storage } from '../platform/storage/storage.ts';
@@ -9,8 +10,12 @@ export interface IncomingFile {
   originalname: string;
   mimetype: string;
   path: string | null;
+  /** Of the bytes as sent; null without a path. */
+  sha256: string | null;
   overLimit: 'too_large' | 'too_many' | null;
 }
+
+type Received = Pick<IncomingFile, 'path' | 'sha256' | 'overLimit'>;
 
 /**
  * Receives files to disk while counting: one over the size limit, or past the tenth, is read to its end and thrown
@@ -44,14 +49,17 @@ export class IncomingFiles implements StorageEngine {
     );
   }
 
-  private async receive(file: Express.Multer.File): Promise<Pick<IncomingFile, 'path' | 'overLimit'>> {
+  private async receive(file: Express.Multer.File): Promise<Received> {
     const path = this.storage.incomingPath();
     const handle = await open(path, 'wx', 0o600);
+    const hash = createHash('sha256');
     let bytes = 0;
     try {
       for await (const chunk of file.stream as AsyncIterable<Buffer>) {
         bytes += chunk.length;
-        if (bytes <= fileLimits.maxBytes) await handle.writeFile(chunk);
+        if (bytes > fileLimits.maxBytes) continue;
+        hash.update(chunk);
+        await handle.writeFile(chunk);
       }
     } catch (error) {
       await rm(path, { force: true });
@@ -59,18 +67,18 @@ export class IncomingFiles implements StorageEngine {
     } finally {
       await handle.close();
     }
-    if (bytes <= fileLimits.maxBytes) return { path, overLimit: null };
+    if (bytes <= fileLimits.maxBytes) return { path, sha256: hash.digest('hex'), overLimit: null };
     await rm(path, { force: true });
-    return { path: null, overLimit: 'too_large' };
+    return { path: null, sha256: null, overLimit: 'too_large' };
   }
 }
 
-async function discard(file: Express.Multer.File): Promise<Pick<IncomingFile, 'path' | 'overLimit'>> {
+async function discard(file: Express.Multer.File): Promise<Received> {
   file.stream.resume();
   await new Promise<void>((resolve, reject) => {
     file.stream.once('end', resolve);
     file.stream.once('error', reject);
     file.stream.once('close', resolve);
   });
-  return { path: null, overLimit: 'too_many' };
+  return { path: null, sha256: null, overLimit: 'too_many' };
 }

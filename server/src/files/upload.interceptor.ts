@@ -48,6 +48,9 @@ export class UploadInterceptor implements NestInterceptor {
       if (!request.readableEnded) cutOff(request, response);
       throw error;
     }
+    const files = (request.files ?? []) as unknown as IncomingFile[];
+    const sent = files.map(({ originalname, sha256 }) => [originalname, sha256]);
+    request.body = { ...(request.body as object), files: sent };
     return next.handle().pipe(finalize(() => void removeIncoming(request)));
   }
 

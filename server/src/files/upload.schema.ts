@@ -2,7 +2,11 @@ import { z } from 'zod';
 import type { FileKind } from '@kerfyard/common/files';
 import { AppError } from '../platform/http/app-error.ts';
 
-const uploadFieldsSchema = z.strictObject({ kind: z.enum(['photo', 'drawing', 'document']) });
+const uploadFieldsSchema = z.strictObject({
+  kind: z.enum(['photo', 'drawing', 'document']),
+  /** Set by the interceptor over whatever was sent: what the request's key stands for. */
+  files: z.array(z.unknown()),
+});
 
 /**
  * The text fields of an upload, which are there only once the interceptor has read the body.
