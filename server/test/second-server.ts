@@ -21,7 +21,7 @@ export async function startSecondServer(overrides: Record<string, string> = {}):
   const url = `http://127.0.0.1:${port}`;
   const child = spawn(process.execPath, ['--enable-source-maps', program], {
     stdio: ['ignore', 'pipe', 'pipe'],
-    env: { ...settings(port, url), ...overrides },
+    env: { ...secondServerSettings(port, url), ...overrides },
   });
   let output = '';
   child.stdout.on('data', (chunk: Buffer) => (output += chunk.toString()));
@@ -41,7 +41,8 @@ export async function startSecondServer(overrides: Record<string, string> = {}):
   return server;
 }
 
-function settings(port: number, url: string): Record<string, string> {
+/** What the server under test was told, for another process beside it. */
+export function secondServerSettings(port: number, url: string): Record<string, string> {
   const env = process.env as Record<string, string>;
   return {
     PATH: env.PATH ?? '',
