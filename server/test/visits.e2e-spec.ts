@@ -1,9 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import type { ErrorBody } from '@kerfyard/common/errors';
-import type { Actor } from '@kerfyard/common/people';
 import type { VisitView, VisitWindow } from '@kerfyard/common/visits';
-import { MoneyReader } from '../src/payments/money-reader.ts';
-import { VisitReader } from '../src/visits/visit-reader.ts';
 import {
   addPerson,
   expectStatus,
@@ -14,7 +11,6 @@ import {
 import { activeWork, awardedWork, proposeVisit, viewWork, visitBody, windowIn } from './builders/awards.ts';
 import { setAside, type Work } from './builders/paid-work.ts';
 import { Client } from './client.ts';
-import { countQueries } from './counted-queries.ts';
 import { closeDatabase, sql } from './database.ts';
 import { openLine } from './live.ts';
 import { mailTo } from './mail.ts';
@@ -264,23 +260,5 @@ describe('the week', () => {
     const long = { from: windowIn(0).startsAt, to: windowIn(24 * 63).startsAt };
     expect((await gc.owner.client.get('/api/visits', { query: long })).status).toBe(422);
     expect((await new Client().get('/api/visits', { query: long })).status).toBe(401);
-  });
-
-  it('costs the same number of queries for one visit as for many', async () => {
-    const [gc, crew] = await Promise.all([makeGeneralContractor(), makeCuttingContractor()]);
-    const works = await Promise.all([activeWork(200_000, { gc, crew }), activeWork(200_000, { gc, crew })]);
-    const counted = countQueries();
-    const reader = new VisitReader(counted.uow, new MoneyReader(counted.uow));
-    const actor = { company: { id: gc.id, kind: 'general_contractor', name: gc.name } } as Actor;
-    const query = { from: windowIn(0).startsAt, to: windowIn(200).startsAt };
-    await proposeVisit(works[0], { windows: [windowIn(20)] });
-    const one = await counted.during(() => reader.ofCompany(actor, query));
-    for (let n = 0; n < 6; n += 1) await proposeVisit(works[n % 2]!, { windows: [windowIn(30 + n)] });
-    const many = await counted.during(async () =>
-      expect(await reader.ofCompany(actor, query)).toHaveLength(7),
-    );
-    await counted.close();
-    expect(many).toBe(one);
-    expect(one).toBe(2);
   });
 });
