@@ -59,19 +59,25 @@ export const locales = ['en', 'es', 'pseudo'] as const;
 export type Locale = (typeof locales)[number];
 const KEY = 'kerfyard.locale';
 
-/** `?locale=` first (and kept), then what was chosen before, then the browser's language, then English. */
+/**
+ * `?locale=` first, then what was chosen before, then English. The browser's language decides nothing yet: only the
+ * field screens are in Spanish, and a page in two languages is for people who asked for it.
+ */
 export function chosenLocale(): Locale {
   const asked = new URLSearchParams(window.location.search).get('locale');
   const stored = readStored('localStorage', KEY);
-  for (const candidate of [asked, stored, navigator.language.slice(0, 2)]) {
+  for (const candidate of [asked, stored]) {
     const known = locales.find((locale) => locale === candidate);
     if (known !== undefined) return known;
   }
   return 'en';
 }
 
-export function keepLocale(locale: Locale): void {
+/** Keep the language for later visits and show the page in it. */
+export function changeLocale(locale: Locale): void {
   writeStored('localStorage', KEY, locale);
+  // The whole page is said anew: catalogues, document language, formats.
+  window.location.reload();
 }
 
 /** Starts the catalogues; the page renders after it. */

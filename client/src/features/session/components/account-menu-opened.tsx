@@ -1,6 +1,7 @@
 import type { MeView } from '@kerfyard/common/people';
 import { DropdownMenu } from '@radix-ui/themes';
 import { useTranslation } from 'react-i18next';
+import { changeLocale, chosenLocale, locales } from '../../../lib/i18n.ts';
 import { themeChoices, useTheme } from '../../../lib/theme.ts';
 import { useSignOut } from '../hooks/use-session.ts';
 import { AccountButton } from './account-button.tsx';
@@ -30,8 +31,21 @@ export default function AccountMenuOpened({ me }: { me: MeView }) {
           ))}
         </DropdownMenu.RadioGroup>
         <DropdownMenu.Separator />
+        <DropdownMenu.RadioGroup value={chosenLocale()} onValueChange={chooseLocale}>
+          {(['en', 'es'] as const).map((locale) => (
+            <DropdownMenu.RadioItem key={locale} value={locale} lang={locale}>
+              {t(`language.${locale}`)}
+            </DropdownMenu.RadioItem>
+          ))}
+        </DropdownMenu.RadioGroup>
+        <DropdownMenu.Separator />
         <DropdownMenu.Item onSelect={() => signOut.mutate()}>{t('signOut')}</DropdownMenu.Item>
       </DropdownMenu.Content>
     </DropdownMenu.Root>
   );
+}
+
+function chooseLocale(value: string): void {
+  const locale = locales.find((known) => known === value);
+  if (locale !== undefined) changeLocale(locale);
 }
