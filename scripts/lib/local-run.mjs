@@ -6,7 +6,7 @@ import { buildStale } from './build.mjs';
 import { Failure } from './failure.mjs';
 import { checkNodeVersion, installStale } from './install.mjs';
 import { dataDirectory, makeHome, placesIn } from './paths.mjs';
-import { endLeftovers } from './pid-files.mjs';
+import { endLeftovers, npmLaunchers } from './pid-files.mjs';
 import { choosePort } from './ports.mjs';
 import { endServerLeftRunning, isClusterComplete, openCluster } from './postgres-cluster.mjs';
 import { postgresPrograms } from './postgres-programs.mjs';
@@ -46,9 +46,9 @@ async function lockHome(places, shutdown) {
     );
   }
   shutdown.add(lock.release);
-  const parent = process.env.npm_lifecycle_event ? process.ppid : null;
-  lock.describe({ parent });
-  return (url, databasePort) => lock.describe({ parent, url, databasePort });
+  const launchers = npmLaunchers();
+  lock.describe({ launchers });
+  return (url, databasePort) => lock.describe({ launchers, url, databasePort });
 }
 
 /** The ports of a run. Only the app's own is fixed: the others are found through the links on the page. */

@@ -3,14 +3,35 @@ import { dirname, join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 
 /**
- * When a process began, in clock ticks since boot, or null when it cannot be told. Pids are used again; pid and start
- * together are not. Field 22 of /proc/PID/stat (proc(5)); the second field may contain spaces and brackets.
+ * When a process began, in clock ticks since boot, or null when it is gone or cannot be told. Pids are used again; pid
+ * and start together are not. Field 22 of /proc/PID/stat (proc(5)); the second field may contain spaces and brackets.
  */
 export function processStart(pid) {
+  const found = describeProcess(pid);
+  return found && found.state !== 'Z' ? found.start : null;
+}
+
+/**
+ * The processes that stand between npm and this one, npm included, as `{ pid, start }`; none when npm did not start it.
+ * npm runs scripts through a shell, which may stay or may replace itself by the script.
+ */
+export function npmLaunchers() {
+  if (!process.env.npm_lifecycle_event) return [];
+  const parent = describeProcess(process.ppid);
+  if (!parent) return [];
+  const isShell = /sh$/.test(parent.name);
+  const grandparent = isShell ? describeProcess(parent.parentPid) : null;
+  return [parent, grandparent].filter(Boolean).map(({ pid, start }) => ({ pid, start }));
+}
+
+/** Name, parent and start of a process from /proc/PID/stat, or null when there is none to be read. */
+function describeProcess(pid) {
   try {
     const stat = readFileSync(`/proc/${pid}/stat`, 'utf8');
-    const fields = stat.slice(stat.lastIndexOf(')') + 2).split(' ');
-    return fields[0] === 'Z' ? null : fields[19];
+    const end = stat.lastIndexOf(')');
+    const fields = stat.slice(end + 2).split(' ');
+    const name = stat.slice(stat.indexOf('(') + 1, end);
+    return { pid, name, state: fields[0], parentPid: Number(fields[1]), start: fields[19] };
   } catch {
     return null;
   }

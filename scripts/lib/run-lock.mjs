@@ -1,9 +1,9 @@
-import { linkSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { linkSync, mkdirSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { isAlive, processStart, readPidFile, waitUntilGone } from './pid-files.mjs';
 
 const lockName = 'kerfyard.lock';
-const orphanGraceMs = 15_000;
+const endingGraceMs = 15_000;
 
 /** What the running `npm start` or `npm run dev` of this data folder says of itself, or null when none runs. */
 export function runningInstance(runDirectory) {
@@ -24,7 +24,9 @@ export async function takeRunLock(runDirectory) {
     if (createWhole(file, JSON.stringify(own)))
       return { describe, release: () => rmSync(file, { force: true }) };
     const holder = readPidFile(file);
-    if (isAlive(holder) && !(isOrphan(holder) && (await waitUntilGone(holder, orphanGraceMs)))) {
+    // A run whose npm was killed is about to stop by itself.
+    const isEnding = holder?.launchers?.some((launcher) => !isAlive(launcher));
+    if (isAlive(holder) && !(isEnding && (await waitUntilGone(holder, endingGraceMs)))) {
       return { heldBy: holder };
     }
     rmSync(file, { force: true });
@@ -43,16 +45,5 @@ function createWhole(file, text) {
     return false;
   } finally {
     rmSync(draft, { force: true });
-  }
-}
-
-/** Whether the process that started this one was killed; such a run is about to stop by itself. */
-function isOrphan(entry) {
-  if (!entry.parent) return false;
-  try {
-    const stat = readFileSync(`/proc/${entry.pid}/stat`, 'utf8');
-    return Number(stat.slice(stat.lastIndexOf(')') + 2).split(' ')[1]) !== entry.parent;
-  } catch {
-    return false;
   }
 }

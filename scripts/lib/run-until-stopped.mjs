@@ -1,6 +1,7 @@
 import { printError } from './failure.mjs';
+import { npmLaunchers } from './pid-files.mjs';
 import { logTail } from './services.mjs';
-import { createShutdown, onStopSignal, watchParent } from './shutdown.mjs';
+import { createShutdown, onStopSignal, watchLaunchers } from './shutdown.mjs';
 
 /**
  * Runs a script that starts services and then lasts until it is stopped: by a signal, by the end of the program that
@@ -17,7 +18,8 @@ export function runUntilStopped(open) {
     process.exit(code);
   };
   onStopSignal(() => end(0, '\nStopping…'));
-  if (process.env.npm_lifecycle_event) watchParent(() => end(0));
+  const launchers = npmLaunchers();
+  if (launchers.length) watchLaunchers(launchers, () => end(0));
   const watch = async (service) => {
     const code = await service.exited;
     if (service.isExpected || shutdown.isEnding) return;

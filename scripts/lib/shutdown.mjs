@@ -1,5 +1,6 @@
 import { setTimeout as sleep } from 'node:timers/promises';
 import { printError } from './failure.mjs';
+import { isAlive } from './pid-files.mjs';
 
 /**
  * What has to be undone when the script ends: steps run last in, first out, each once, however the end comes.
@@ -38,11 +39,10 @@ export function onStopSignal(end) {
 }
 
 /**
- * Runs `end()` when the process that started this one is killed. npm passes signals on, but a killed npm cannot, and
- * Linux then only gives its child another parent.
+ * Runs `end()` when npm, which started this process, is killed. npm passes signals on, but a killed npm cannot, and what
+ * it started would run on unseen.
  */
-export async function watchParent(end) {
-  const parent = process.ppid;
-  while (process.ppid === parent) await sleep(500, undefined, { ref: false });
+export async function watchLaunchers(launchers, end) {
+  while (launchers.every(isAlive)) await sleep(500, undefined, { ref: false });
   end();
 }
