@@ -1,7 +1,7 @@
 import { PDFDocument, PDFName } from 'pdf-lib';
 import { readPdfText } from '../../../test/pdf-text.ts';
 import type { PaperInput } from './paper-input.ts';
-import { samplePaper } from './sample-paper.ts';
+import { samplePaper } from '../../../test/sample-paper.ts';
 import { appendSignaturePage } from './signature-page.ts';
 import { renderSubcontractPaper } from './subcontract-paper.ts';
 

@@ -1,7 +1,7 @@
 import { bidInputSchema } from '@kerfyard/common/bids';
 import { prefillResponsibilities, scopeBodySchema } from '@kerfyard/common/scopes';
-import { scheduleOfValues } from '../../awards/schedule-of-values.ts';
-import type { PaperInput } from './paper-input.ts';
+import { scheduleOfValues } from '../src/awards/schedule-of-values.ts';
+import type { PaperInput } from '../src/subcontracts/paper/paper-input.ts';
 
 const id = (n: number): string => `00000000-0000-4000-8000-${String(n).padStart(12, '0')}`;
 
