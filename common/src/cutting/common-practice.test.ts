@@ -73,6 +73,20 @@ describe('cover counted from the underside of the slab', () => {
     expect(cautious.cautions.join(' ')).toContain('6 in beyond');
   });
 
+  it('a slab thicker than the cover decides the depth: the conduit lies under it', () => {
+    // 6 in of cover, 8 in of slab: 8 + 1.315 + 3
+    const plan = trenchPlan({
+      ...trench,
+      wiring: 'rmc_imc',
+      slabThicknessIn: 8,
+      beddingIn: 3,
+      location: 'general',
+    });
+    expect(plan.coverIn).toBe(6);
+    expect(plan.digDepthIn).toBeCloseTo(12.315, 12);
+    expect(plan.soilDepthIn).toBeCloseTo(4.315, 12);
+  });
+
   it('under 2 in of concrete it is 12 in', () => {
     expect(trenchPlan({ ...trench, slabThicknessIn: 2, location: 'under_2in_concrete' }).coverIn).toBe(12);
   });

@@ -107,7 +107,7 @@ export function leastCutGrid(panel: PanelLimits): PieceGrid {
     if (alongLength * alongWidth > maxPieces) continue;
     const crossCutFt = crossCutFeet(panel, alongLength, alongWidth);
     const grid = { alongLength, alongWidth, crossCutFt };
-    if (best === undefined || compareGrids(panel, grid, best) < 0) best = grid;
+    if (best === undefined || compareGrids(grid, best) < 0) best = grid;
   }
   if (best !== undefined) return best;
   throw new CuttingInputError({
@@ -129,13 +129,15 @@ function fewestRows(panel: PanelLimits, alongLength: number, fewestAlongWidth: n
   return Math.max(1, fewestAlongWidth, byWeight, byDoorway);
 }
 
-function compareGrids(panel: PanelLimits, left: PieceGrid, right: PieceGrid): number {
-  const longestSide = (grid: PieceGrid) =>
-    Math.max(panel.lengthFt / grid.alongLength, panel.widthFt / grid.alongWidth);
+/**
+ * Least cross-cut feet, then fewest pieces, then fewest cut lines. The smaller longest side, which ranks before cut
+ * lines, never decides: with pieces of a × b the feet are L·W·(1/a + 1/b) − L − W, so grids equal in feet and in
+ * number of pieces are equal in a + b and a·b, and so in both sides.
+ */
+function compareGrids(left: PieceGrid, right: PieceGrid): number {
   return (
     compareNearly(left.crossCutFt, right.crossCutFt) ||
     left.alongLength * left.alongWidth - right.alongLength * right.alongWidth ||
-    compareNearly(longestSide(left), longestSide(right)) ||
     left.alongLength + left.alongWidth - (right.alongLength + right.alongWidth)
   );
 }
