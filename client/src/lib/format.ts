@@ -103,7 +103,7 @@ export function toLocalInput(instant: string | Date, timeZone: string): string {
     timeZone,
   }).formatToParts(new Date(instant));
   const part = (type: Intl.DateTimeFormatPartTypes) => parts.find((item) => item.type === type)?.value ?? '';
-  return `${part('year')}-${part('month')}-${part('day')}T${part('hour')}:${part('minute')}`;
+  return `${part('year').padStart(4, '0')}-${part('month')}-${part('day')}T${part('hour')}:${part('minute')}`;
 }
 
 /**

@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import { useController, type FieldValues } from 'react-hook-form';
 import { fromLocalInput, toLocalInput, zoneName } from '../../lib/format.ts';
 import { FieldFrame, type FieldWords } from './field-frame.tsx';
@@ -11,6 +12,7 @@ export function DateTimeField<Input extends FieldValues, Output>(
   const { control, name, label, hint, optional, timeZone, disabled = false } = props;
   const { field, fieldState } = useController({ control, name });
   const instant = typeof field.value === 'string' && field.value !== '' ? (field.value as string) : null;
+  const typed = useTypedMoment(instant, timeZone);
   const zone = instant === null ? zoneName(timeZone) : zoneName(timeZone, instant);
   return (
     <FieldFrame
@@ -30,13 +32,27 @@ export function DateTimeField<Input extends FieldValues, Output>(
             step={60}
             className={styles.control}
             disabled={disabled}
-            value={instant === null ? '' : toLocalInput(instant, timeZone)}
+            value={typed.text}
             onBlur={field.onBlur}
-            onChange={(event) => field.onChange(fromLocalInput(event.target.value, timeZone))}
+            onChange={(event) => {
+              typed.type(event.target.value);
+              field.onChange(fromLocalInput(event.target.value, timeZone));
+            }}
           />
           <span className={styles.zone}>{zone}</span>
         </span>
       )}
     </FieldFrame>
   );
+}
+
+/**
+ * Keeps what is in the input while it means the form's value: a year half typed (0002) has an instant that would be
+ * written back differently, and the input would jump under the fingers.
+ */
+function useTypedMoment(instant: string | null, timeZone: string) {
+  const [text, type] = useState(() => (instant === null ? '' : toLocalInput(instant, timeZone)));
+  const isSame =
+    fromLocalInput(text, timeZone) === (instant === null ? null : new Date(instant).toISOString());
+  return { text: isSame ? text : instant === null ? '' : toLocalInput(instant, timeZone), type };
 }
