@@ -8,6 +8,7 @@ import { inRoot } from './lib/paths.mjs';
 import { choosePort } from './lib/ports.mjs';
 import { step } from './lib/progress.mjs';
 import { runUntilStopped } from './lib/run-until-stopped.mjs';
+import { waitForHttp } from './lib/services.mjs';
 
 const quietMs = 300;
 
@@ -79,11 +80,16 @@ runUntilStopped(async (shutdown) => {
     '--watch',
     '--preserveWatchOutput',
   ];
-  shutdown.add(spawnTool({ name: 'tsc', args: compiler, env: toolEnv }));
-  shutdown.add(
-    spawnTool({ name: 'vite', args: ['--clearScreen', 'false'], cwd: inRoot('client'), env: toolEnv }),
-  );
+  shutdown.add(spawnTool({ name: 'tsc', args: compiler, env: toolEnv }).stop);
+  const page = spawnTool({
+    name: 'vite',
+    args: ['--clearScreen', 'false'],
+    cwd: inRoot('client'),
+    env: toolEnv,
+  });
+  shutdown.add(page.stop);
   shutdown.add(watchCompiled(restart));
+  await waitForHttp(page, url);
   context.tellUrl(url);
   announce({ url, ports, places });
   return { services };

@@ -8,7 +8,8 @@ import { inRoot, root } from './paths.mjs';
 const untilInputCloses = '"$@" </dev/null & cat >/dev/null; trap "" TERM; kill -TERM 0; wait';
 
 /**
- * Starts a watching tool from node_modules/.bin with its lines shown under its name. Returns the function that stops it.
+ * Starts a watching tool from node_modules/.bin with its lines shown under its name. Returns it as a
+ * service: `{ name, hasExited, exited, stop, logFile }`.
  */
 export function spawnTool({ name, args, env, cwd = root }) {
   // A workspace may have a version of its own.
@@ -20,15 +21,22 @@ export function spawnTool({ name, args, env, cwd = root }) {
     detached: true,
     stdio: ['pipe', 'pipe', 'pipe'],
   });
-  const ended = new Promise((resolve) => shell.once('close', resolve));
+  const tool = { name, hasExited: false, logFile: '' };
+  tool.exited = new Promise((resolve) => {
+    shell.once('close', (code) => {
+      tool.hasExited = true;
+      resolve(code);
+    });
+  });
   for (const stream of [shell.stdout, shell.stderr]) {
     createInterface({ input: stream }).on('line', (line) => {
       // The first address a person sees is the app's, so a tool does not announce its own.
       if (line.trim() && !line.includes('://')) console.log(`[${name}] ${line}`);
     });
   }
-  return () => {
+  tool.stop = () => {
     shell.stdin.end();
-    return ended;
+    return tool.exited;
   };
+  return tool;
 }
