@@ -19,7 +19,7 @@ export {
 export * from './corner-choices.ts';
 export { coreWeightLb, slabWeightLb, type CoreWeightInput, type SlabWeightInput } from './weights.ts';
 export * from './passes.ts';
-export * from './stitch.ts';
+export { stitchHoles, stitchPitchToleranceIn, type StitchHoles, type StitchInput } from './stitch.ts';
 export {
   bladeReachIn,
   bladeReachWithSource,
