@@ -76,7 +76,7 @@ describe('mail stand-in', () => {
     expect(page).toContain('Mail for this machine');
     expect(page).toContain('&lt;b&gt;Sign&lt;/b&gt;');
     const shown = await (await fetch(`${standIn.webUrl}/messages/${message!.id}`)).text();
-    expect(shown).toContain('sandbox="allow-popups allow-popups-to-escape-sandbox"');
+    expect(shown).toContain('sandbox="allow-scripts allow-popups allow-popups-to-escape-sandbox"');
     expect(shown).toContain('<a href="http://127.0.0.1:3000/verify?token=abc&amp;x=1">');
     expect(shown).not.toContain('<script');
     const raw = await fetch(`${standIn.webUrl}/messages/${message!.id}/html`);

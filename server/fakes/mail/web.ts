@@ -20,9 +20,9 @@ function sendMessageHtml(response: ServerResponse, message: StoredMessage): void
     'Content-Type': 'text/html; charset=utf-8',
     // The message is foreign text: no script, no forms, no remote loads; its links open in a new tab.
     'Content-Security-Policy':
-      "sandbox allow-popups allow-popups-to-escape-sandbox; default-src 'none'; style-src 'unsafe-inline'; img-src data:",
+      "sandbox allow-scripts allow-popups allow-popups-to-escape-sandbox; default-src 'none'; style-src 'unsafe-inline'; img-src data:",
   });
-  response.end(`<base target="_blank">${message.html ?? ''}`);
+  response.end(`<!doctype html><base target="_blank">${message.html ?? ''}`);
 }
 
 function sendAttachment(response: ServerResponse, message: StoredMessage, index: number): void {

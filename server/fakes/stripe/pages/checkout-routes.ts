@@ -25,11 +25,8 @@ type SessionRecord = Kinds['checkout_session'];
 type MethodRecord = Kinds['payment_method'];
 
 function show(response: ServerResponse, session: SessionRecord, form = EMPTY_FORM): void {
-  const hasProblem = form !== EMPTY_FORM;
-  sendPage(response, checkoutPage(session, form), {
-    status: hasProblem ? 422 : 200,
-    formTargets: originsOf(session.api.success_url),
-  });
+  // A form with errors is answered with 200: browsers report any other status of a page as an error of the site.
+  sendPage(response, checkoutPage(session, form), { formTargets: originsOf(session.api.success_url) });
 }
 
 /** GET /pay/:session */

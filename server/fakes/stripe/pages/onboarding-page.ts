@@ -107,7 +107,7 @@ export function saveOnboarding(
   const errors = check(values);
   if (Object.keys(errors).length > 0) {
     const page = onboardingPage(link, { values, errors });
-    return sendPage(response, page, { status: 422, formTargets: originsOf(link.notes.returnUrl) });
+    return sendPage(response, page, { formTargets: originsOf(link.notes.returnUrl) });
   }
   const bank = values['step'] === 'later' ? undefined : findBankByNumber(values['account_number']!.trim());
   standIn.transact((work) =>

@@ -20,9 +20,10 @@ interface Table {
 }
 
 function press(action: string, id: string): SafeHtml {
+  const { label } = OUTCOMES[action]!;
   return html`<form method="post" action="/outcome">
     <input type="hidden" name="action" value="${action}" /><input type="hidden" name="id" value="${id}" />
-    <button class="small">${OUTCOMES[action]!.label}</button>
+    <button class="small" aria-label="${`${label} ${id}`}">${label}</button>
   </form>`;
 }
 

@@ -20,15 +20,14 @@ export function pressOutcome(
 ): void {
   const { action = '', id = '' } = values;
   const outcome = OUTCOMES[action];
-  if (!outcome)
-    return sendPage(response, overviewPage(standIn.read(), 'There is no such button.'), { status: 400 });
+  if (!outcome) return sendPage(response, overviewPage(standIn.read(), 'There is no such button.'));
   try {
     standIn.transact((work) => outcome.run(work, id));
     standIn.runDueTimers();
     seeOther(response, '/');
   } catch (error) {
     if (!(error instanceof StripeError)) throw error;
-    sendPage(response, overviewPage(standIn.read(), error.message), { status: 409 });
+    sendPage(response, overviewPage(standIn.read(), error.message));
   }
 }
 
@@ -36,9 +35,7 @@ export function pressOutcome(
 export function moveClock(standIn: StandIn, values: Record<string, string>, response: ServerResponse): void {
   const hours = Number(values['hours']);
   if (!Number.isInteger(hours) || hours < 1 || hours > LONGEST_STEP_HOURS) {
-    return sendPage(response, overviewPage(standIn.read(), 'The clock moves by whole hours.'), {
-      status: 400,
-    });
+    return sendPage(response, overviewPage(standIn.read(), 'The clock moves by whole hours.'));
   }
   standIn.advance(hours * 3_600_000);
   seeOther(response, '/');
