@@ -1,4 +1,5 @@
 import { createContext, useCallback, useContext, useEffect, useRef, useState, type ReactNode } from 'react';
+import { deviceMs } from '../lib/clock.ts';
 
 /** At most one polite announcement in this time; the newest wins, so a busy board says one sentence, not fifty. */
 const QUIET_MS = 5000;
@@ -25,11 +26,11 @@ export function Announcer({ children }: { children: ReactNode }) {
       return;
     }
     const say = (words: string) => {
-      last.current = Date.now();
+      last.current = deviceMs();
       waiting.current = null;
       setPolite(words);
     };
-    const wait = last.current + QUIET_MS - Date.now();
+    const wait = last.current + QUIET_MS - deviceMs();
     if (wait <= 0) {
       say(text);
       return;

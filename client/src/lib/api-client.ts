@@ -1,4 +1,5 @@
 import { errorFromBody, isApiError, offlineError, type ApiError } from './api-error.ts';
+import { deviceMs, syncClock } from './clock.ts';
 import { sessionGate } from './session-gate.ts';
 import { readStored, writeStored } from './storage.ts';
 
@@ -41,7 +42,7 @@ export async function withSession<T>(
   attempt: () => Promise<T>,
   whenSignedOut: 'ask' | 'throw' = 'ask',
 ): Promise<T> {
-  const startedAt = Date.now();
+  const startedAt = deviceMs();
   try {
     return await attempt();
   } catch (error) {
@@ -79,12 +80,12 @@ let refreshing: Promise<boolean> | null = null;
  * waited for the lock finds the newer time in storage and does not rotate again).
  * @param since the time the failed request began; a refresh after it counts
  */
-export function refreshSession(since: number = Date.now(), original?: ApiError): Promise<boolean> {
+export function refreshSession(since: number = deviceMs(), original?: ApiError): Promise<boolean> {
   refreshing ??= locked(async () => {
     if (Number(readStored('localStorage', REFRESHED_AT)) > since) return true;
     try {
       await send('POST', '/api/auth/refresh', undefined, {});
-      writeStored('localStorage', REFRESHED_AT, String(Date.now()));
+      writeStored('localStorage', REFRESHED_AT, String(deviceMs()));
       return true;
     } catch (error) {
       // Only a clear "no" ends the session; a lost line or a busy server says nothing about it.
@@ -117,6 +118,7 @@ async function send<T>(method: Method, path: string, body: unknown, options: Req
     if (error instanceof DOMException && error.name === 'AbortError') throw error;
     throw offlineError();
   });
+  syncClock(response.headers.get('Date'));
   const answer = await readBody(response);
   if (!response.ok) throw errorFromBody(response.status, answer);
   return answer as T;
