@@ -23,7 +23,7 @@ async function query(url, sql) {
   return output.trim();
 }
 
-async function isGone(wanted, withinMs = 8_000) {
+async function isGone(wanted, withinMs = 30_000) {
   for (let waited = 0; waited < withinMs; waited += 50) {
     if (await wanted()) return true;
     await sleep(50);

@@ -119,7 +119,7 @@ function launch(script, more = {}) {
   return launched;
 }
 
-async function until(condition, what, withinMs = 20_000) {
+async function until(condition, what, withinMs = 60_000) {
   for (let waited = 0; waited < withinMs; waited += 50) {
     if (await condition()) return;
     await sleep(50);
