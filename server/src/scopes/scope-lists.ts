@@ -8,7 +8,7 @@ import { UnitOfWork } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
 import { OPEN_SCOPES } from './open-scopes.queries.ts';
 import { readOpenScopesCursor, writeOpenScopesCursor } from './open-scopes-cursor.ts';
-import { milesToChord } from './place.ts';
+import { cellsWithin, milesToChord } from './place.ts';
 import { requireCompany } from './require-company.ts';
 import { ScopeAccess, type Yard } from './scope-access.ts';
 import { toCard, toOwnScope, type CardRow, type OwnScopeRow } from './scope-presenter.ts';
@@ -61,6 +61,9 @@ export class ScopeLists {
       query.limit + 1,
       after === null ? null : toSortParameter(query.sort, after.value),
       after?.id ?? null,
+      yard.position === null || query.withinMiles === undefined
+        ? null
+        : cellsWithin(yard.position, query.withinMiles),
     ]);
     const shown = rows.slice(0, query.limit);
     const [records, ownBids] = await Promise.all([

@@ -24,12 +24,15 @@ export const scopesAndBids: Migration = {
       lat double precision CHECK (lat BETWEEN -90 AND 90),
       lon double precision CHECK (lon BETWEEN -180 AND 180),
       -- The site on the unit sphere: distance between two such points grows exactly as the way over the ground
-      -- does, so one index serves both "within so many miles" and "nearest first".
+      -- does, so an index on it answers "nearest first".
       place cube GENERATED ALWAYS AS (
         CASE WHEN lat IS NOT NULL AND lon IS NOT NULL THEN cube(ARRAY[
           cos(radians(lat)) * cos(radians(lon)), cos(radians(lat)) * sin(radians(lon)), sin(radians(lat))
         ]) END
       ) STORED,
+      -- The quarter-degree square the site lies in, for "within so many miles": unlike a box on "place", the planner
+      -- has statistics on it, so that it uses the index for a short way and the list's order for a long one.
+      cell integer GENERATED ALWAYS AS ((floor(lat * 4)::integer + 360) * 1440 + floor(lon * 4)::integer + 720) STORED,
       methods text[] NOT NULL DEFAULT '{}',
       indoors boolean NOT NULL DEFAULT false,
       inch_feet double precision,
@@ -53,6 +56,7 @@ export const scopesAndBids: Migration = {
     CREATE INDEX scope_open_due ON scope (due_at, id) WHERE status = 'open';
     CREATE INDEX scope_open_size ON scope (inch_feet DESC, id DESC) WHERE status = 'open';
     CREATE INDEX scope_open_place ON scope USING gist (place) WHERE status = 'open';
+    CREATE INDEX scope_open_cell ON scope (cell) WHERE status = 'open';
     -- How many scopes of a company came due, and how many it awarded: counted from the index alone.
     CREATE INDEX scope_record ON scope (company_id, status) WHERE status IN ('due', 'awarded', 'closed_without_award');
 
