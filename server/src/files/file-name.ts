@@ -15,6 +15,7 @@ export function cleanFileName(raw: string): string {
     .normalize('NFC')
     .replace(/[<>:"|?*]/g, ' ')
     .replace(/\s+/g, ' ')
+    .replace(/ \./g, '.')
     .replace(/^[. ]+|[. ]+$/g, '');
   const safe = plain === '' || DEVICE.test(plain) ? `file ${plain}`.trim() : plain;
   return shorten(safe, fileLimits.maxNameLength);

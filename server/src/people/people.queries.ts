@@ -53,17 +53,10 @@ export const SELECT_WAITING_SIGN_UP = `
     EXISTS (SELECT 1 FROM app_user u WHERE u.email = s.email) AS has_account
   FROM sign_up s WHERE s.id = $1`;
 
-export const INSERT_COMPANY = `
-  INSERT INTO company (id, kind, name, phone, wrapped_key) VALUES ($1, $2, $3, $4, $5)`;
-
 /** No row when the address has an account already. */
 export const INSERT_USER = `
   INSERT INTO app_user (id, email, name, password_hash, is_staff, email_verified_at)
   VALUES ($1, $2, $3, $4, $5, app_now()) ON CONFLICT (email) DO NOTHING RETURNING id`;
-
-export const INSERT_MEMBERSHIP = `
-  INSERT INTO membership (user_id, company_id, role, sign_limit_cents, set_aside_limit_cents, change_limit_cents)
-  VALUES ($1, $2, $3, $4, $5, $6)`;
 
 export const SELECT_EMAIL = `SELECT email FROM app_user WHERE id = $1`;
 
@@ -71,6 +64,6 @@ export const SELECT_EMAIL = `SELECT email FROM app_user WHERE id = $1`;
 export const COUNT_UNREAD = `
   SELECT count(*) AS messages
   FROM thread t
-  JOIN message m ON m.thread_id = t.id AND m.author_id <> $1
+  JOIN message m ON m.thread_id = t.id AND m.company_id <> $2
   LEFT JOIN thread_read r ON r.thread_id = t.id AND r.user_id = $1
   WHERE $2 IN (t.gc_company_id, t.crew_company_id) AND m.seq > coalesce(r.seq, 0)`;
