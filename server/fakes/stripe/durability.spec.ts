@@ -6,6 +6,9 @@ import { createRequire } from 'node:module';
 import { tmpdir } from 'node:os';
 import { dirname, join } from 'node:path';
 import Stripe from 'stripe';
+import { Journal } from './journal.ts';
+import { PLATFORM } from './records.ts';
+import { Store } from './store.ts';
 import { Harness, SECRET_KEY } from './test/harness.ts';
 
 describe('state survives', () => {
@@ -53,6 +56,36 @@ describe('state survives', () => {
     expect((await harness.stripe.customers.list()).data).toEqual([]);
     expect((await harness.stripe.webhookEndpoints.list()).data).toHaveLength(2);
     expect(await harness.control('GET', 'clock')).toMatchObject({ offsetSeconds: 0 });
+  });
+});
+
+describe('the journal', () => {
+  test('is rewritten as it stands when it has grown, and not with every change after that', () => {
+    const dataDir = mkdtempSync(join(tmpdir(), 'journal-'));
+    const path = join(dataDir, 'journal.ndjson');
+    const lines = () => readFileSync(path, 'utf8').trimEnd().split('\n').length;
+    const journal = new Journal(dataDir, 5_000);
+    const store = new Store(journal);
+    store.load();
+    const customer = (id: string, name: string) =>
+      ({ id, owner: PLATFORM, api: { id, name }, notes: {} }) as never;
+    const write = (id: string, name: string) => {
+      const change = store.begin();
+      change.put('customer', customer(id, name));
+      change.commit();
+    };
+    for (let round = 0; round < 200; round += 1) write(`cus_${round % 10}`, `name ${round}`);
+    expect(lines()).toBeLessThan(100);
+    for (let round = 0; round < 200; round += 1) write(`cus_more_${round}`, 'x'.repeat(100));
+    expect(lines()).toBeGreaterThan(200);
+    journal.close();
+
+    const reopened = new Store(new Journal(dataDir));
+    reopened.load();
+    const all = reopened.begin().list('customer', PLATFORM);
+    expect(all).toHaveLength(210);
+    expect(all.at(-1)!.api.name).toBe('name 190');
+    rmSync(dataDir, { recursive: true });
   });
 });
 

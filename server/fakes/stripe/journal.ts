@@ -17,7 +17,7 @@ export interface JournalEntry {
   remove: [kind: string, id: string][];
 }
 
-const COMPACT_ABOVE_BYTES = 32_000_000;
+const SMALLEST_COMPACTION_BYTES = 32_000_000;
 
 /**
  * Append-only file of changes. A line is written before the caller is answered, so what was answered survives
@@ -27,8 +27,13 @@ export class Journal {
   private readonly path: string;
   private fd = -1;
   private sizeBytes = 0;
+  private compactAboveBytes: number;
 
-  constructor(dataDir: string) {
+  constructor(
+    dataDir: string,
+    private readonly smallestCompactionBytes = SMALLEST_COMPACTION_BYTES,
+  ) {
+    this.compactAboveBytes = smallestCompactionBytes;
     mkdirSync(dataDir, { recursive: true });
     this.path = join(dataDir, 'journal.ndjson');
   }
@@ -53,7 +58,7 @@ export class Journal {
   }
 
   needsCompaction(): boolean {
-    return this.sizeBytes > COMPACT_ABOVE_BYTES;
+    return this.sizeBytes > this.compactAboveBytes;
   }
 
   /** Replaces the history by the records as they stand now; the old file stays until the new one is whole. */
@@ -61,6 +66,8 @@ export class Journal {
     const fd = openSync(`${this.path}.new`, 'w');
     for (const record of records) writeSync(fd, `${JSON.stringify({ put: [record], remove: [] })}\n`);
     this.sizeBytes = fstatSync(fd).size;
+    // Twice what it holds now: a big state must not be rewritten with every change.
+    this.compactAboveBytes = Math.max(this.smallestCompactionBytes, 2 * this.sizeBytes);
     closeSync(fd);
     renameSync(`${this.path}.new`, this.path);
     closeSync(this.fd);

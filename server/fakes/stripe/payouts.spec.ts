@@ -104,6 +104,15 @@ describe('payouts and top-ups', () => {
     await harness.expectBooksToAgree(crew);
   });
 
+  test('A-14 an account with requirements due pays nothing out', async () => {
+    const crew = await paidCrew();
+    await harness.outcome('account_restricted', crew);
+    const error = await rejection(
+      stripe.payouts.create({ amount: 100, currency: 'usd' }, { stripeAccount: crew }),
+    );
+    expect(error.code).toBe('payouts_not_allowed');
+  });
+
   test('A-15 a top-up arrives after a business day and funds the platform', async () => {
     await harness.startOnMonday();
     const topup = await stripe.topups.create({

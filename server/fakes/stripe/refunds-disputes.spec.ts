@@ -161,4 +161,32 @@ describe('disputes', () => {
     await harness.webhook('platform', 'charge.dispute.closed', dispute!.id);
     await harness.expectBooksToAgree();
   });
+
+  test('A-13 what a dispute has taken cannot be refunded as well; after a refund only the rest of a card payment is disputed', async () => {
+    const charge = await harness.paidCharge(10_000, 'pm_card_bypassPending');
+    await harness.paidCharge(50_000, 'pm_card_bypassPending');
+    await stripe.refunds.create({ charge: charge.id, amount: 4_000 });
+    await harness.outcome('dispute_opens', charge.id);
+    const [dispute] = (await stripe.disputes.list({ charge: charge.id })).data;
+    expect(dispute).toMatchObject({ amount: 6_000 });
+    expect(await rejection(stripe.refunds.create({ charge: charge.id }))).toMatchObject({
+      code: 'charge_disputed',
+    });
+    await harness.outcome('dispute_won', dispute!.id);
+    expect(await stripe.refunds.create({ charge: charge.id })).toMatchObject({ amount: 6_000 });
+    await harness.expectBooksToAgree();
+  });
+
+  test('A-13 a bank debit that was refunded can still be disputed in full: the payer is credited twice', async () => {
+    const charge = await harness.paidCharge(10_000, 'pm_usBankAccount_success');
+    await harness.outcome('debit_succeeds', charge.id);
+    await harness.paidCharge(50_000, 'pm_card_bypassPending');
+    await stripe.refunds.create({ charge: charge.id });
+    await harness.outcome('dispute_opens', charge.id);
+    expect((await stripe.disputes.list({ charge: charge.id })).data[0]).toMatchObject({
+      amount: 10_000,
+      status: 'lost',
+    });
+    await harness.expectBooksToAgree();
+  });
 });

@@ -85,11 +85,15 @@ export function openDispute(work: Work, chargeId: string, input: DisputeInput = 
     throw invalidRequest(`Charge ${chargeId} cannot be disputed.`, { param: 'charge' });
   }
   const isBank = charge.notes.sourceType === 'bank_account';
+  // A bank debit can be disputed in full although it was refunded: the payer is then credited twice (same document).
+  const amountCents = isBank ? charge.api.amount_captured : charge.api.amount - charge.api.amount_refunded;
+  if (amountCents === 0)
+    throw invalidRequest(`Charge ${chargeId} has been refunded whole.`, { param: 'charge' });
   const isInquiry = (input.isInquiry ?? false) && !isBank;
   const api: Stripe.Dispute = {
     id: newId('dispute'),
     object: 'dispute',
-    amount: charge.api.amount,
+    amount: amountCents,
     balance_transactions: [],
     charge: charge.id,
     created: work.now(),

@@ -73,11 +73,15 @@ function blankPayout(work: Work, input: PayoutInput): Stripe.Payout {
 }
 
 function createPayout(work: Work, owner: string, input: PayoutInput): PayoutRecord {
+  const account = work.get('account', owner);
+  if (account && !account.api.payouts_enabled) {
+    throw invalidRequest('Payouts are not enabled for this account: it has requirements that are due.', {
+      code: 'payouts_not_allowed',
+    });
+  }
   const destination = destinationOf(work, owner);
   if (!destination) {
-    throw invalidRequest("Sorry, you don't have any external accounts in that currency (usd).", {
-      code: 'no_account',
-    });
+    throw invalidRequest("Sorry, you don't have any external accounts in that currency (usd).");
   }
   if (availableCents(work, owner, input.sourceType) < input.amountCents) {
     throw balanceInsufficient('You have insufficient funds in your Stripe account for this transfer.');

@@ -56,8 +56,21 @@ function chargeToRefund(work: Work, owner: string, input: CreateInput): ChargeRe
   return work.edit('charge', idOf(intent.api.latest_charge));
 }
 
+/** What a dispute has taken cannot be refunded as well; an inquiry and a won dispute leave the money here. */
+function assertNotTaken(work: Work, charge: ChargeRecord): void {
+  const harmless = ['won', 'warning_needs_response', 'warning_under_review', 'warning_closed'];
+  const taking = work
+    .list('dispute', charge.owner)
+    .find(({ api }) => api.charge === charge.id && !harmless.includes(String(api.status)));
+  if (!taking) return;
+  throw invalidRequest(`Charge ${charge.id} has been charged back; cannot issue a refund.`, {
+    code: 'charge_disputed',
+  });
+}
+
 function assertRefundable(work: Work, charge: ChargeRecord, amountCents: number): void {
   const { api } = charge;
+  if (api.disputed) assertNotTaken(work, charge);
   const left = api.amount - api.amount_refunded;
   if (api.status === 'failed' || (api.status === 'succeeded' && !api.captured)) {
     throw invalidRequest(`Charge ${api.id} cannot be refunded.`, { param: 'charge' });
