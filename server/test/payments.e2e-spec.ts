@@ -258,7 +258,7 @@ describe('releasing', () => {
     expect((await readWork(work)).money).toMatchObject({
       releasedCents: 900_000,
       retainageCents: 100_000,
-      setAsideCents: 0,
+      setAsideCents: 1_000_000,
     });
     expect(await brokenRules()).toEqual([]);
   });

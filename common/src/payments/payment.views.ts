@@ -4,6 +4,7 @@ import type { FundingStatus, OperationStatus, ReleaseStatus } from './payment.st
 /** The bar that both sides and staff read; all in cents, from the ledger. */
 export interface MoneyLineView {
   contractCents: number;
+  /** Everything set aside so far: held still, objected, kept as retainage, or released since. */
   setAsideCents: number;
   releasedCents: number;
   retainageCents: number;

@@ -3,7 +3,13 @@ import type { FundingView, MoneyLineView, ReleaseView } from '@kerfyard/common/p
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { FUNDINGS_OF } from './fundings.queries.ts';
 import { presentFunding, type FundingRow } from './funding-views.ts';
-import { LINES_UNDER_WAY, MONEY_LINES, PAID_FOR_LINES, RELEASED_LINES, SET_ASIDE_LINES } from './money-reader.queries.ts';
+import {
+  LINES_UNDER_WAY,
+  MONEY_LINES,
+  PAID_FOR_LINES,
+  RELEASED_LINES,
+  SET_ASIDE_LINES,
+} from './money-reader.queries.ts';
 import { RELEASES_OF } from './releases.queries.ts';
 import { presentRelease, type ReleaseRow } from './release-views.ts';
 
@@ -23,18 +29,7 @@ export class MoneyReader {
   /** The money line of each subcontract, in one query. */
   async moneyLine(subcontractIds: string[]): Promise<Map<string, MoneyLineView>> {
     const rows = await this.uow.rows<MoneyLineRow>(null, MONEY_LINES, [subcontractIds]);
-    return new Map(
-      rows.map((row) => [
-        row.id,
-        {
-          contractCents: Number(row.contract_cents),
-          setAsideCents: Number(row.held_cents),
-          releasedCents: Number(row.released_cents),
-          retainageCents: Number(row.retainage_cents),
-          objectedCents: 0,
-        },
-      ]),
-    );
+    return new Map(rows.map((row) => [row.id, presentMoneyLine(row)]));
   }
 
   async fundings(subcontractId: string, viewer: 'gc' | 'crew'): Promise<FundingView[]> {
@@ -70,4 +65,17 @@ export class MoneyReader {
     const rows = await this.uow.rows<{ sov_line_id: string }>(tx, sql, [subcontractId]);
     return new Set(rows.map((row) => row.sov_line_id));
   }
+}
+
+/** All that was ever set aside is what is held still, kept as retainage or released since. */
+function presentMoneyLine(row: MoneyLineRow): MoneyLineView {
+  const retainageCents = Number(row.retainage_cents);
+  const releasedCents = Number(row.released_cents);
+  return {
+    contractCents: Number(row.contract_cents),
+    setAsideCents: Number(row.held_cents) + retainageCents + releasedCents,
+    releasedCents,
+    retainageCents,
+    objectedCents: 0,
+  };
 }
