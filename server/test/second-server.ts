@@ -65,7 +65,7 @@ export function secondServerSettings(port: number, url: string): Record<string, 
 }
 
 async function waitUntilHealthy(server: SecondServer, exitCode: () => number | null): Promise<void> {
-  for (let tries = 0; tries < 100; tries += 1) {
+  for (let tries = 0; tries < 300; tries += 1) {
     if (exitCode() !== null)
       throw new Error(`the second server ended with ${exitCode()}:\n${server.output()}`);
     const isUp = await fetch(`${server.url}/api/health`).then(

@@ -178,8 +178,8 @@ export class PaperWriter {
     this.doc.y += points;
   }
 
-  /** Write the foot of every page and close the file. */
-  async finish(foot: string): Promise<Buffer> {
+  /** Write the foot of every page and close the file; a page to be appended elsewhere has no number of its own. */
+  async finish(foot: string, { numbered = true }: { numbered?: boolean } = {}): Promise<Buffer> {
     this.root?.end();
     const { start, count } = this.doc.bufferedPageRange();
     for (let index = start; index < start + count; index += 1) {
@@ -190,8 +190,12 @@ export class PaperWriter {
       this.doc.markContent('Artifact', { type: 'Pagination' });
       this.style({ size: sizes.small, colour: colours.quiet });
       this.doc.text(this.printable(foot), page.margin, y, { lineBreak: false });
-      const place = `Page ${index - start + 1} of ${count}`;
-      this.doc.text(place, page.width - page.margin - this.doc.widthOfString(place), y, { lineBreak: false });
+      if (numbered) {
+        const place = `Page ${index - start + 1} of ${count}`;
+        this.doc.text(place, page.width - page.margin - this.doc.widthOfString(place), y, {
+          lineBreak: false,
+        });
+      }
       this.doc.endMarkedContent();
     }
     const ended = new Promise<void>((resolve, reject) => {

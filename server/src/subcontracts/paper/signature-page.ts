@@ -60,5 +60,5 @@ async function renderPage(input: SignaturePageInput): Promise<Buffer> {
     'This page was added when the second signature was in. The paper without it is kept as well, under the hash above.',
     { quiet: true },
   );
-  return writer.finish(`Subcontract ${input.number} · signatures`);
+  return writer.finish(`Subcontract ${input.number} · signature page`, { numbered: false });
 }
