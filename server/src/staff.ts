@@ -1,11 +1,14 @@
 import 'reflect-metadata';
 import { randomBytes } from 'node:crypto';
 import { parseArgs } from 'node:util';
-import { Sequelize } from 'sequelize';
+import { Sequelize } from 'sequelize-typescript';
 import { z } from 'zod';
 import { textSchema } from '@kerfyard/common/api';
 import { emailSchema, passwordSchema } from '@kerfyard/common/people';
 import { Accounts } from './people/accounts.ts';
+import { Company } from './people/company.model.ts';
+import { Membership } from './people/membership.model.ts';
+import { Crew, Truck } from './people/unit.models.ts';
 import { Audit } from './platform/audit/audit.ts';
 import { Passwords } from './platform/auth/passwords.ts';
 import { readConfig, type Config } from './platform/config/config.ts';
@@ -34,10 +37,14 @@ function readOptions(): StaffOptions {
 
 /** Makes a staff person; nobody becomes staff by the app itself. Gives the password when it was made here. */
 async function makeStaff(config: Config, options: StaffOptions): Promise<string | null> {
-  const sequelize = new Sequelize(config.databaseUrl, { logging: false, pool: { max: 1 } });
+  const sequelize = new Sequelize(config.databaseUrl, {
+    logging: false,
+    pool: { max: 1 },
+    models: [Company, Crew, Truck, Membership],
+  });
   try {
     const uow = new UnitOfWork(sequelize);
-    const accounts = new Accounts(uow, new KeyVault(config));
+    const accounts = new Accounts(Company, Membership, uow, new KeyVault(config));
     const audit = new Audit(uow);
     const password = options.password ?? randomBytes(15).toString('base64url');
     const passwordHash = await new Passwords().hash(password);

@@ -1,9 +1,12 @@
 import { Injectable } from '@nestjs/common';
+import { InjectModel } from '@nestjs/sequelize';
 import type { CompanyKind, Role } from '@kerfyard/common/people';
 import { KeyVault } from '../platform/crypto/key-vault.ts';
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { newId } from '../platform/ids/ids.ts';
-import { INSERT_COMPANY, INSERT_MEMBERSHIP, INSERT_USER } from './people.queries.ts';
+import { Company } from './company.model.ts';
+import { Membership } from './membership.model.ts';
+import { INSERT_USER } from './people.queries.ts';
 
 export interface NewPerson {
   name: string;
@@ -31,6 +34,8 @@ export interface NewMembership {
 @Injectable()
 export class Accounts {
   constructor(
+    @InjectModel(Company) private readonly companies: typeof Company,
+    @InjectModel(Membership) private readonly memberships: typeof Membership,
     private readonly uow: UnitOfWork,
     private readonly vault: KeyVault,
   ) {}
@@ -39,7 +44,7 @@ export class Accounts {
   async createCompany(tx: Tx, company: NewCompany): Promise<string> {
     const id = newId();
     const wrappedKey = this.vault.newCompanyKey(id);
-    await this.uow.rows(tx, INSERT_COMPANY, [id, company.kind, company.name, company.phone, wrappedKey]);
+    await this.companies.create({ id, ...company, wrappedKey }, { transaction: tx });
     return id;
   }
 
@@ -56,13 +61,6 @@ export class Accounts {
   }
 
   async addMember(tx: Tx, userId: string, membership: NewMembership): Promise<void> {
-    await this.uow.rows(tx, INSERT_MEMBERSHIP, [
-      userId,
-      membership.companyId,
-      membership.role,
-      membership.signLimitCents ?? null,
-      membership.setAsideLimitCents ?? null,
-      membership.changeLimitCents ?? null,
-    ]);
+    await this.memberships.create({ userId, ...membership }, { transaction: tx });
   }
 }

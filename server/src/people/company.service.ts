@@ -1,50 +1,53 @@
 import { Injectable } from '@nestjs/common';
+import { InjectModel } from '@nestjs/sequelize';
 import type { Actor, EditCompany, NewUnit, OwnCompanyView } from '@kerfyard/common/people';
+import type { PlaceView } from '@kerfyard/common/places';
 import type { Origin } from '../platform/auth/access.decorators.ts';
 import { Audit } from '../platform/audit/audit.ts';
+import { Clock } from '../platform/clock/clock.ts';
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
 import { Places } from '../places/places.ts';
+import { Company } from './company.model.ts';
 import { presentOwnCompany } from './company.presenter.ts';
-import {
-  INSERT_CREW,
-  INSERT_TRUCK,
-  LOCK_COMPANY,
-  SELECT_COMPANY,
-  SELECT_CREWS,
-  SELECT_TRUCKS,
-  UPDATE_COMPANY,
-  type CompanyRow,
-  type UnitRow,
-} from './company.queries.ts';
+import { Crew, Truck } from './unit.models.ts';
 
 /** Crews and trucks a company may keep, each. */
 const MAX_UNITS = 100;
 
-const units = {
-  crew: { insert: INSERT_CREW, select: SELECT_CREWS },
-  truck: { insert: INSERT_TRUCK, select: SELECT_TRUCKS },
-} as const;
-export type UnitKind = keyof typeof units;
+export type UnitKind = 'crew' | 'truck';
 
 /** One's own company: always the actor's, so no id is ever asked for. */
 @Injectable()
 export class CompanyService {
+  private readonly units: Record<UnitKind, typeof Crew | typeof Truck>;
+
   constructor(
+    @InjectModel(Company) private readonly companies: typeof Company,
+    @InjectModel(Crew) crews: typeof Crew,
+    @InjectModel(Truck) trucks: typeof Truck,
     private readonly uow: UnitOfWork,
     private readonly audit: Audit,
     private readonly places: Places,
-  ) {}
+    private readonly clock: Clock,
+  ) {
+    this.units = { crew: crews, truck: trucks };
+  }
 
   async view(actor: Actor): Promise<OwnCompanyView> {
-    const companyId = companyOf(actor);
-    const [row, crews, trucks] = await Promise.all([
-      this.uow.row<CompanyRow>(null, SELECT_COMPANY, [companyId]),
-      this.uow.rows<UnitRow>(null, SELECT_CREWS, [companyId]),
-      this.uow.rows<UnitRow>(null, SELECT_TRUCKS, [companyId]),
-    ]);
-    if (row === null) throw new AppError('not_found');
-    return presentOwnCompany(row, crews, trucks);
+    const company = await this.companies.findByPk(companyOf(actor), {
+      attributes: { exclude: ['wrappedKey'] },
+      include: [Crew, Truck].map((model) => ({
+        model,
+        separate: true,
+        order: [
+          ['name', 'ASC'],
+          ['id', 'ASC'],
+        ],
+      })),
+    });
+    if (company === null) throw new AppError('not_found');
+    return presentOwnCompany(company);
   }
 
   /** @throws AppError invalid_input for a yard outside the ZIP table, or a yard given by a general contractor */
@@ -52,33 +55,25 @@ export class CompanyService {
     const companyId = companyOf(actor);
     const place = this.checkYard(actor, input);
     await this.uow.run(async (tx) => {
-      const before = await this.lock(tx, companyId);
-      await this.uow.rows(tx, UPDATE_COMPANY, [
-        companyId,
-        input.name,
-        input.phone,
-        input.yard?.zip ?? null,
-        place?.city ?? null,
-        place?.state ?? null,
-        input.yard?.lat ?? null,
-        input.yard?.lon ?? null,
-        input.serviceRadiusMi,
-        [...new Set(input.methods)],
-      ]);
+      const company = await this.lock(tx, companyId);
+      const before = editable(company);
+      const changed = { ...columnsOf(input, place), version: company.version + 1 };
+      await company.update({ ...changed, updatedAt: await this.clock.now(tx) }, { transaction: tx });
       await this.audit.write(tx, {
         actor,
         action: 'company.edited',
         subject: { type: 'company', id: companyId },
-        detail: { before: editable(before), after: input },
+        detail: { before, after: input },
         origin,
       });
     });
     return this.view(actor);
   }
 
-  private checkYard(actor: Actor, input: EditCompany): { city: string; state: string } | null {
+  private checkYard(actor: Actor, input: EditCompany): PlaceView | null {
     const isCutting = actor.company?.kind === 'cutting_contractor';
-    if (!isCutting && (input.yard !== null || input.serviceRadiusMi !== null || input.methods.length > 0)) {
+    const hasCuttingPart = input.yard !== null || input.serviceRadiusMi !== null || input.methods.length > 0;
+    if (!isCutting && hasCuttingPart) {
       throw AppError.field('yard', 'Only a cutting contractor has a yard, a service radius and methods');
     }
     if (input.yard === null) return null;
@@ -91,15 +86,17 @@ export class CompanyService {
   async addUnit(actor: Actor, kind: UnitKind, input: NewUnit, origin: Origin): Promise<void> {
     const companyId = companyOf(actor);
     if (actor.company?.kind !== 'cutting_contractor') throw new AppError('forbidden');
+    const model = this.units[kind];
     await this.uow.run(async (tx) => {
       await this.lock(tx, companyId);
-      const present = await this.uow.rows<UnitRow>(tx, units[kind].select, [companyId]);
+      const present = await model.findAll({ where: { companyId }, transaction: tx });
       if (present.some((unit) => unit.id === input.id && unit.name === input.name)) return;
       if (present.length >= MAX_UNITS) throw AppError.field('name', `At most ${MAX_UNITS}`);
-      if (present.some((unit) => unit.name === input.name))
+      if (present.some((unit) => unit.name === input.name)) {
         throw AppError.field('name', 'You have one of that name');
-      const added = await this.uow.row(tx, units[kind].insert, [input.id, companyId, input.name]);
-      if (added === null) throw new AppError('key_reused');
+      }
+      if ((await model.findByPk(input.id, { transaction: tx })) !== null) throw new AppError('key_reused');
+      await model.create({ id: input.id, companyId, name: input.name }, { transaction: tx });
       await this.audit.write(tx, {
         actor,
         action: `${kind}.added`,
@@ -110,10 +107,10 @@ export class CompanyService {
     });
   }
 
-  private async lock(tx: Tx, companyId: string): Promise<CompanyRow> {
-    const row = await this.uow.row<CompanyRow>(tx, LOCK_COMPANY, [companyId]);
-    if (row === null) throw new AppError('not_found');
-    return row;
+  private async lock(tx: Tx, companyId: string): Promise<Company> {
+    const company = await this.companies.findByPk(companyId, { transaction: tx, lock: tx.LOCK.UPDATE });
+    if (company === null) throw new AppError('not_found');
+    return company;
   }
 }
 
@@ -122,13 +119,28 @@ function companyOf(actor: Actor): string {
   return actor.company.id;
 }
 
-function editable(row: CompanyRow): EditCompany {
-  const { yard_zip: zip, yard_lat: lat, yard_lon: lon } = row;
+/** City and state come from the ZIP table, the position from the person. */
+function columnsOf(input: EditCompany, place: PlaceView | null) {
   return {
-    name: row.name,
-    phone: row.phone,
+    name: input.name,
+    phone: input.phone,
+    yardZip: input.yard?.zip ?? null,
+    yardCity: place?.city ?? null,
+    yardState: place?.state ?? null,
+    yardLat: input.yard?.lat ?? null,
+    yardLon: input.yard?.lon ?? null,
+    serviceRadiusMi: input.serviceRadiusMi,
+    methods: [...new Set(input.methods)],
+  };
+}
+
+function editable(company: Company): EditCompany {
+  const { yardZip: zip, yardLat: lat, yardLon: lon } = company;
+  return {
+    name: company.name,
+    phone: company.phone,
     yard: zip === null || lat === null || lon === null ? null : { zip, lat, lon },
-    serviceRadiusMi: row.service_radius_mi,
-    methods: row.methods,
+    serviceRadiusMi: company.serviceRadiusMi,
+    methods: company.methods,
   };
 }

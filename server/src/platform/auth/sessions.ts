@@ -1,5 +1,6 @@
 import { Injectable } from '@nestjs/common';
 import { Audit } from '../audit/audit.ts';
+import { Clock } from '../clock/clock.ts';
 import { UnitOfWork, type Tx } from '../database/unit-of-work.ts';
 import { newId } from '../ids/ids.ts';
 import { LiveHints } from '../realtime/live-hints.ts';
@@ -34,6 +35,7 @@ export class Sessions {
     private readonly accessTokens: AccessTokens,
     private readonly audit: Audit,
     private readonly hints: LiveHints,
+    private readonly clock: Clock,
   ) {}
 
   /** A new session; never one that a browser brought along. */
@@ -137,7 +139,7 @@ export class Sessions {
     return {
       access: this.accessTokens.sign(userId, refresh.sessionId),
       refresh: refresh.text,
-      refreshUntil: new Date(Date.now() + IDLE_SECONDS * 1_000),
+      refreshUntil: new Date(this.clock.wallMs() + IDLE_SECONDS * 1_000),
     };
   }
 }

@@ -22,6 +22,7 @@ import { AccessTokens } from '../auth/access-tokens.ts';
 import { Actors } from '../auth/actors.ts';
 import { readCookie } from '../auth/cookies.ts';
 import { Sessions } from '../auth/sessions.ts';
+import { Clock } from '../clock/clock.ts';
 import { CONFIG, type Config } from '../config/config.ts';
 import { safeError } from '../logging/safe-error.ts';
 import { LiveHints, rooms } from './live-hints.ts';
@@ -54,6 +55,7 @@ export class LiveGateway
     private readonly sessions: Sessions,
     private readonly hints: LiveHints,
     private readonly watchAccess: WatchAccess,
+    private readonly clock: Clock,
   ) {}
 
   afterInit(server: LiveSocketServer): void {
@@ -91,7 +93,7 @@ export class LiveGateway
     const { actor } = socket.data;
     const budget = new MessageBudget();
     socket.use((_packet, next) => {
-      if (budget.take(Date.now())) next();
+      if (budget.take(this.clock.wallMs())) next();
       else socket.disconnect(true);
     });
     await socket.join([rooms.user(actor.userId), rooms.session(actor.sessionId)]);
