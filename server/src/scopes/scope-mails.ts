@@ -66,7 +66,7 @@ function bidIn(facts: Facts, scopeId: string): MailContent | null {
   return {
     subject: say.subject(facts.title),
     lines: [say.line(facts.title), facts.mode === 'sealed' ? say.sealed(atSite(facts)) : say.ranked],
-    action: { label: say.action, path: `/scopes/${scopeId}` },
+    action: { label: say.action, path: `/scopes/${scopeId}/bids` },
   };
 }
 
@@ -77,7 +77,7 @@ function bidsDue(facts: Facts, scopeId: string): MailContent | null {
   return {
     subject: say.subject(facts.title),
     lines: [count === 0 ? say.none(facts.title) : say.some(count, facts.title)],
-    action: { label: say.action, path: `/scopes/${scopeId}` },
+    action: { label: say.action, path: `/scopes/${scopeId}/bids` },
   };
 }
 
