@@ -233,6 +233,7 @@ export default tseslint.config(
   { files: ['**/*.cjs'], rules: { '@typescript-eslint/no-require-imports': 'off' } },
   {
     files: ['client/src/**/*.{ts,tsx}'],
+    ignores: tests,
     ...reactHooks.configs.flat.recommended,
     // react-hooks/refs takes the `ref` of a react-hook-form field for a React ref that is read while rendering.
     rules: { ...reactHooks.configs.flat.recommended.rules, 'react-hooks/refs': 'off' },

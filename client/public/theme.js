@@ -4,7 +4,7 @@
   var choice = 'system';
   try {
     choice = localStorage.getItem('kerfyard.theme') || 'system';
-  } catch (error) {
+  } catch {
     // Storage may be closed to us; the system's choice is then the only one.
   }
   var dark = choice === 'dark' || (choice === 'system' && matchMedia('(prefers-color-scheme: dark)').matches);

@@ -21,18 +21,15 @@ export const instantSchema = z.iso.datetime({ offset: true });
 
 /** Text a person types: trimmed, bounded, no control characters but line breaks. */
 export function textSchema(max: number, min = 1) {
-  return (
-    z
-      .string()
-      .trim()
-      .min(min, min === 1 ? 'Write something here' : `At least ${min} characters`)
-      .max(max, `At most ${max} characters`)
-      // eslint-disable-next-line no-control-regex -- the point is to keep control characters out
-      .regex(
-        /^[^\u0000-\u0009\u000b-\u001f\u007f\u202a-\u202e\u2066-\u2069]*$/,
-        'Leave out control characters',
-      )
-  );
+  return z
+    .string()
+    .trim()
+    .min(min, min === 1 ? 'Write something here' : `At least ${min} characters`)
+    .max(max, `At most ${max} characters`)
+    .regex(
+      /^[^\u0000-\u0009\u000b-\u001f\u007f\u202a-\u202e\u2066-\u2069]*$/,
+      'Leave out control characters',
+    );
 }
 
 /** A person, as others see one. */
