@@ -94,7 +94,7 @@ describe('idempotency keys', () => {
 
   test('A-22 same key while the first is running: 409 (docs.stripe.com/api/errors)', async () => {
     const destination = await fundedAccount();
-    await harness.control('POST', 'faults', { kind: 'delay', path: '/v1/transfers', delayMs: 400 });
+    await harness.control('POST', 'faults', { kind: 'delay', path: '/v1/transfers', delayMs: 1500 });
     const params = { amount: 100, currency: 'usd', destination };
     const first = harness.stripe.transfers.create(params, { idempotencyKey: 'a22' });
     await new Promise((resolve) => setTimeout(resolve, 100));
@@ -305,11 +305,13 @@ describe('lists', () => {
 
 describe('rate limits', () => {
   test('A-29 (plain form) 429 with the reason, without Retry-After, not retried by the SDK (docs.stripe.com/rate-limits)', async () => {
-    await harness.control('POST', 'settings', { requestsPerSecond: 5 });
+    await harness.control('POST', 'settings', { requestsPerSecond: 2 });
     const answers = await Promise.all(Array.from({ length: 12 }, () => harness.raw('GET', '/v1/balance')));
     await harness.control('POST', 'settings', { requestsPerSecond: 0 });
     const limited = answers.filter(({ status }) => status === 429);
-    expect(limited).toHaveLength(7);
+    // How many depends on how fast this machine is; never all, since the first two always pass.
+    expect(limited.length).toBeGreaterThan(0);
+    expect(limited.length).toBeLessThanOrEqual(10);
     expect(limited[0]!.headers.get('stripe-rate-limited-reason')).toBe('global-rate');
     expect(limited[0]!.headers.get('retry-after')).toBeNull();
 

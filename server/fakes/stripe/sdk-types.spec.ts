@@ -437,7 +437,7 @@ describe('answers and events have the shape of the SDK types (A-26, A-30)', () =
     expect(
       [...Object.keys(OBJECT_TYPES)].filter((kind) => !kinds.has(kind) && kind !== 'bank_account'),
     ).toEqual([]);
-  });
+  }, 60_000);
 
   test('every event of the tour carries a valid object, and all kinds of events occurred', async () => {
     const work = await allEvents(harness);
@@ -445,7 +445,7 @@ describe('answers and events have the shape of the SDK types (A-26, A-30)', () =
     expect(problems).toEqual([]);
     const seen = new Set<string>(work.map((event) => event.type));
     expect(EVENT_TYPES.filter((type) => !seen.has(type))).toEqual([]);
-  });
+  }, 60_000);
 
   test('the check bites: a field too many, a missing and a wrong one are found', () => {
     const transfer = captured.map(({ body }) => body).find((body) => body['object'] === 'transfer')!;

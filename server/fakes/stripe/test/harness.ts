@@ -279,7 +279,7 @@ export class Harness {
   }
 
   /** Waits until a condition holds. Throws after `limitMs`. */
-  async until(isTrue: () => boolean | Promise<boolean>, what: string, limitMs = 5000): Promise<void> {
+  async until(isTrue: () => boolean | Promise<boolean>, what: string, limitMs = 15_000): Promise<void> {
     const end = Date.now() + limitMs;
     while (!(await isTrue())) {
       if (Date.now() > end) throw new Error(`not within ${limitMs} ms: ${what}`);
