@@ -125,8 +125,8 @@ export function wallWithMarkedOpening(): Scene {
     ...lettering({ text: 'W1', at: [-0.4, 5.7], heightFt: 1, ...paint('#e0701f', 0.13) }),
     ...lettering({
       text: 'SAW THIS SIDE',
-      at: [-5.9, 6.1],
-      heightFt: 0.34,
+      at: [-4.95, 6.5],
+      heightFt: 0.26,
       ...crayon('#1d2125'),
       widthFt: 0.045,
     }),
