@@ -200,6 +200,21 @@ describe('messages', () => {
   });
 });
 
+describe('threads about one scope', () => {
+  it('are those of its bidders to the general contractor, and its own to a crew', async () => {
+    const scope = await publishScope(gc);
+    const [mine, theirs] = [await open(crew.owner, scope.id), await open(other.owner, scope.id)];
+    const about = async (person: Person, id: string) => {
+      const { body } = await expectStatus(person.client.get(`/api/threads?scopeId=${id}`), 200);
+      return (body as Page<ThreadView>).items.map((thread) => thread.id).sort();
+    };
+    expect(await about(gc.owner, scope.id)).toEqual([mine.id, theirs.id].sort());
+    expect(await about(crew.owner, scope.id)).toEqual([mine.id]);
+    expect(await about(gc.owner, randomUUID())).toEqual([]);
+    await expectStatus(gc.owner.client.get('/api/threads?scopeId=1'), 422);
+  });
+});
+
 describe('what is unread', () => {
   it('counts the other side’s messages per person until they are seen, never backwards', async () => {
     const thread = await freshThread();

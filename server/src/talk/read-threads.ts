@@ -1,5 +1,5 @@
 import { Injectable } from '@nestjs/common';
-import type { Page, PageQuery } from '@kerfyard/common/api';
+import type { Page } from '@kerfyard/common/api';
 import type { Actor } from '@kerfyard/common/people';
 import type { MessageView, ThreadView } from '@kerfyard/common/talk';
 import { FilesService } from '../files/files.service.ts';
@@ -18,7 +18,7 @@ import {
   UNREAD_TOTAL,
 } from './talk.queries.ts';
 import { ThreadAccess } from './thread-access.ts';
-import type { MessagesQuery } from './talk.schema.ts';
+import type { MessagesQuery, ThreadsQuery } from './talk.schema.ts';
 
 /** Threads and messages as one person sees them, and how far that person has read. */
 @Injectable()
@@ -31,13 +31,14 @@ export class ReadThreads {
   ) {}
 
   /** Newest first, by when something was last written. */
-  async page(actor: Actor, query: PageQuery): Promise<Page<ThreadView>> {
+  async page(actor: Actor, query: ThreadsQuery): Promise<Page<ThreadView>> {
     const after = readCursor(query.cursor);
     const rows = await this.uow.rows<ThreadViewRow>(null, THREADS_PAGE, [
       ...reader(actor),
       after?.at ?? null,
       after?.id ?? null,
       query.limit + 1,
+      query.scopeId ?? null,
     ]);
     const key = (row: ThreadViewRow) => ({ at: row.active_at, id: row.id });
     return toPage(rows, query.limit, { key, item: toThreadView });

@@ -1,6 +1,6 @@
 import { Body, Controller, Get, HttpCode, Param, Post, Query } from '@nestjs/common';
 import type { z } from 'zod';
-import { idSchema, pageQuerySchema, type Page, type PageQuery } from '@kerfyard/common/api';
+import { idSchema, type Page } from '@kerfyard/common/api';
 import type { Actor } from '@kerfyard/common/people';
 import {
   openThreadSchema,
@@ -14,7 +14,12 @@ import { CurrentActor, Needs } from '../platform/auth/access.decorators.ts';
 import { OpenThread } from './open-thread.ts';
 import { PostMessage } from './post-message.ts';
 import { ReadThreads } from './read-threads.ts';
-import { messagesQuerySchema, type MessagesQuery } from './talk.schema.ts';
+import {
+  messagesQuerySchema,
+  threadsQuerySchema,
+  type MessagesQuery,
+  type ThreadsQuery,
+} from './talk.schema.ts';
 
 @Controller()
 @Needs('talk')
@@ -28,7 +33,7 @@ export class TalkController {
   @Get('threads')
   list(
     @CurrentActor() actor: Actor,
-    @Query({ schema: pageQuerySchema }) query: PageQuery,
+    @Query({ schema: threadsQuerySchema }) query: ThreadsQuery,
   ): Promise<Page<ThreadView>> {
     return this.threads.page(actor, query);
   }

@@ -20,6 +20,7 @@ const THREAD_VIEW = `
   WHERE (t.gc_company_id = $1 OR t.crew_company_id = $1)`;
 
 export const THREADS_PAGE = `${THREAD_VIEW}
+  AND ($6::uuid IS NULL OR t.scope_id = $6::uuid)
   AND ($3::timestamptz IS NULL OR (coalesce(t.last_message_at, t.created_at), t.id) < ($3::timestamptz, $4::uuid))
   ORDER BY coalesce(t.last_message_at, t.created_at) DESC, t.id DESC LIMIT $5`;
 

@@ -1,5 +1,9 @@
 import { z } from 'zod';
-import { MAX_PAGE } from '@kerfyard/common/api';
+import { idSchema, MAX_PAGE, pageQuerySchema } from '@kerfyard/common/api';
+
+/** All of a company's threads, or those about one scope. */
+export const threadsQuerySchema = pageQuerySchema.extend({ scopeId: idSchema.optional() });
+export type ThreadsQuery = z.output<typeof threadsQuerySchema>;
 
 /** Messages page backwards from the newest by their sequence number. */
 export const messagesQuerySchema = z.strictObject({
