@@ -137,7 +137,7 @@ export function findBankByNumber(accountNumber: string): TestBank | undefined {
   return TEST_BANKS.find((entry) => entry.accountNumber === accountNumber);
 }
 
-/** What the card network says for each decline (docs.stripe.com/declines/codes). */
+/** What the card network says for each decline (codes: docs.stripe.com/declines/codes; messages from memory). */
 export const DECLINES: Record<DeclineReason, { code: string; message: string }> = {
   expired_card: { code: 'expired_card', message: 'Your card has expired.' },
   generic_decline: { code: 'card_declined', message: 'Your card was declined.' },
@@ -151,7 +151,8 @@ export const DECLINES: Record<DeclineReason, { code: string; message: string }> 
   stolen_card: { code: 'card_declined', message: 'Your card was declined.' },
 };
 
-/** What the bank says for each failed debit or payout (docs.stripe.com/payments/ach-direct-debit, /api/payouts/failures). */
+/** What the bank says for each failed debit or payout (codes:
+ * docs.stripe.com/payments/ach-direct-debit and /api/payouts/failures; messages from memory). */
 export const BANK_FAILURES: Record<Exclude<BankBehaviour, 'dispute' | 'processing' | 'success'>, string> = {
   account_closed: 'The bank account has been closed.',
   debit_not_authorized: 'Debit transactions are not approved on the bank account.',

@@ -13,8 +13,9 @@ import { recordMovement } from './balance-transactions.ts';
 type DisputeRecord = Kinds['dispute'];
 type ChargeRecord = Kinds['charge'];
 
-/** $15 a dispute (docs.stripe.com/disputes/how-disputes-work). */
+/** $15 a dispute (stripe.com/pricing). */
 const DISPUTE_FEE_CENTS = 1500;
+/** Days to answer. From memory; the real number depends on the card network. */
 const EVIDENCE_DAYS = 9;
 /** How long the other bank thinks before it decides by the evidence text. The stand-in's own choice. */
 const DECISION_SECONDS = 3600;
