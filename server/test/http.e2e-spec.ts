@@ -6,6 +6,7 @@ import { makeCuttingContractor, signUpBody, uniqueEmail, type Company } from './
 import type { ErrorBody } from '@kerfyard/common/errors';
 import { baseUrl, Client } from './client.ts';
 import { closeDatabase, sql } from './database.ts';
+import { openLine } from './live.ts';
 import { openProxy } from './proxy.ts';
 import { readRouteTable, routeName, type Route } from './route-table.ts';
 import { startSecondServer } from './second-server.ts';
@@ -136,7 +137,7 @@ describe('D-21, D-22, D-23 headers', () => {
       // A missing page is answered by the static server with a policy stricter still.
       if (csp !== "default-src 'none'") expect([path, csp.startsWith(policy)]).toEqual([path, true]);
       expect([path, headers['x-content-type-options']]).toEqual([path, 'nosniff']);
-      expect([path, headers['referrer-policy']]).toEqual([path, 'no-referrer']);
+      expect([path, headers['referrer-policy']]).toEqual([path, 'same-origin']);
       expect([path, headers['cross-origin-opener-policy']]).toEqual([path, 'same-origin']);
       expect([path, headers['cross-origin-resource-policy']]).toEqual([path, 'same-origin']);
       expect([path, headers['x-powered-by']]).toEqual([path, undefined]);
@@ -268,6 +269,35 @@ describe('D-28, D-32 bodies and queries of any shape', () => {
   });
 });
 
+describe('D-28, D-29 how often', () => {
+  it('limits what one person changes, with Retry-After, and nobody else at the same address', async () => {
+    const server = await startSecondServer({ RATE_LIMIT_FACTOR: '1' });
+    try {
+      const [busy, other] = [await makeCuttingContractor(), await makeCuttingContractor()];
+      const at = (company: Company) => {
+        const client = new Client(server.url);
+        client.setCookie('access', company.owner.client.cookie('access') ?? '');
+        return client;
+      };
+      const client = at(busy);
+      const answers = [];
+      // More than two minutes' worth, so that one of their windows is full whenever they turn.
+      for (let batch = 0; batch < 25; batch += 1) {
+        const sent = Array.from({ length: 20 }, () => client.put('/api/company', {}));
+        answers.push(...(await Promise.all(sent)));
+      }
+      const refused = answers.filter(({ status }) => status === 429);
+      expect(answers.filter(({ status }) => status === 422).length).toBeLessThanOrEqual(480);
+      expect(refused.length).toBeGreaterThan(0);
+      for (const { headers } of refused) expect(Number(headers['retry-after'])).toBeGreaterThan(0);
+      expect((await client.get('/api/company')).status).toBe(200);
+      expect((await at(other).put('/api/company', {})).status).toBe(422);
+    } finally {
+      await server.stop();
+    }
+  }, 40_000);
+});
+
 describe('D-26 faults', () => {
   it('answer with the request’s id and nothing of the inside', async () => {
     const database = await openProxy(process.env.TEST_PG_URL ?? '');
@@ -315,12 +345,20 @@ describe('D-26 faults', () => {
 
   it('a stopping server says it is not ready while it still answers, then ends by itself', async () => {
     const stopping = await startSecondServer({ DRAIN_MS: '1500' });
+    const client = new Client(stopping.url);
+    client.setCookie('access', crew.owner.client.cookie('access') ?? '');
+    const line = await openLine(client);
     stopping.signal('SIGTERM');
+    const signalledAt = Date.now();
     await new Promise((resolve) => setTimeout(resolve, 300));
     const health = await fetch(`${stopping.url}/api/health`);
     expect([health.status, await health.json()]).toEqual([503, { status: 'stopping' }]);
     expect((await fetch(`${stopping.url}/api/auth/me`)).status).toBe(401);
     expect(await stopping.exited).toBe(0);
+    // Its open socket does not hold it back.
+    expect(line.socket.connected).toBe(false);
+    expect(Date.now() - signalledAt).toBeLessThan(8_000);
+    line.close();
   });
 });
 

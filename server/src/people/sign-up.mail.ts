@@ -4,6 +4,7 @@ import { UnitOfWork } from '../platform/database/unit-of-work.ts';
 import type { MailContent } from '../platform/mail/mail-content.ts';
 import { Mailer } from '../platform/mail/mailer.ts';
 import { SELECT_WAITING_SIGN_UP, type WaitingSignUpRow } from './people.queries.ts';
+import { signUpMailWords } from './people.words.en.ts';
 import { verifyToken } from './verify-token.ts';
 
 export const SIGN_UP_MAIL = 'sign_up';
@@ -33,27 +34,21 @@ export class SignUpMail implements OnModuleInit {
   private async build(signUpId: string): Promise<MailContent | null> {
     const signUp = await this.waiting(signUpId);
     if (signUp === null || (!signUp.is_open && !signUp.has_account)) return null;
-    if (signUp.has_account) return accountExists;
+    return signUp.has_account ? accountExists() : this.confirm(signUpId, signUp);
+  }
+
+  private confirm(signUpId: string, { name, company_name }: WaitingSignUpRow): MailContent {
+    const words = signUpMailWords.confirm;
+    const token = verifyToken(this.config.signingSecret, signUpId);
     return {
-      subject: 'Confirm your e-mail address',
-      lines: [
-        `Someone signed up with this address as ${signUp.name} of ${signUp.company_name}.`,
-        'If that was you, confirm the address and then sign in with the password you chose. The link works once, for one hour.',
-        'If it was not you, do nothing: without the link no account is made.',
-      ],
-      action: {
-        label: 'Confirm the address',
-        path: `/verify?token=${verifyToken(this.config.signingSecret, signUpId)}`,
-      },
+      subject: words.subject,
+      lines: words.lines(name, company_name),
+      action: { label: words.action, path: `/verify?token=${token}` },
     };
   }
 }
 
-const accountExists: MailContent = {
-  subject: 'You already have an account',
-  lines: [
-    'Someone signed up with this address, which already has an account. Nothing was changed.',
-    'If that was you, sign in with the password you have. If it was not you, there is nothing to do.',
-  ],
-  action: { label: 'Sign in', path: '/sign-in' },
-};
+function accountExists(): MailContent {
+  const { subject, lines, action } = signUpMailWords.hasAccount;
+  return { subject, lines: [...lines], action: { label: action, path: '/sign-in' } };
+}

@@ -28,7 +28,7 @@ export function securityHeaders(config: Config) {
       },
     },
     strictTransportSecurity: isHttps ? { maxAge: 31_536_000, includeSubDomains: false } : false,
-    referrerPolicy: { policy: 'no-referrer' },
+    referrerPolicy: { policy: 'same-origin' },
     crossOriginOpenerPolicy: { policy: 'same-origin' },
     crossOriginResourcePolicy: { policy: 'same-origin' },
     xFrameOptions: { action: 'deny' },
