@@ -11,6 +11,6 @@ import { UploadInterceptor } from './upload.interceptor.ts';
 @Module({
   controllers: [FilesController],
   providers: [FilesService, FileAccess, UploadFiles, ReadFile, UploadInterceptor],
-  exports: [FilesService, FileAccess],
+  exports: [FilesService, FileAccess, UploadFiles],
 })
 export class FilesModule {}

@@ -11,7 +11,7 @@ import { cleanFileName } from './file-name.ts';
 import { FilesService } from './files.service.ts';
 import { refusalWords } from './files.words.en.ts';
 import type { IncomingFile } from './incoming-files.ts';
-import { prepareFile, type PreparedFile } from './prepare-file.ts';
+import { prepareFile, type Incoming, type PreparedFile } from './prepare-file.ts';
 import { Refusal } from './refusal.ts';
 import { uploadLimits } from './upload.limits.ts';
 
@@ -54,20 +54,28 @@ export class UploadFiles {
     origin: Origin,
   ): Promise<string> {
     if (file.overLimit === 'too_many') throw new Refusal('too_many', refusalWords.tooMany);
-    if (file.overLimit === 'too_large' || file.path === null) {
-      throw new Refusal('too_large', refusalWords.tooLarge);
-    }
     const { path } = file;
+    if (path === null) throw new Refusal('too_large', refusalWords.tooLarge);
+    return this.keep(actor, { kind, name, declaredType: file.mimetype, read: () => readFile(path) }, origin);
+  }
+
+  /**
+   * Check, store and register one file.
+   * @returns its id
+   * @throws Refusal
+   */
+  async keep(
+    actor: Actor,
+    { kind, name, declaredType, read }: Omit<Incoming, 'bytes'> & { read: () => Promise<Buffer> },
+    origin: Origin,
+  ): Promise<string> {
     const prepared = await this.inTurn(async () =>
-      prepareFile({ kind, name, declaredType: file.mimetype, bytes: await readFile(path) }),
+      prepareFile({ kind, name, declaredType, bytes: await read() }),
     );
     const { sha256 } = await this.storage.put(prepared.bytes);
     const thumbnail = prepared.thumbnail === null ? null : await this.storage.put(prepared.thumbnail);
-    return this.register(
-      actor,
-      { kind, name, sha256, thumbnailSha256: thumbnail?.sha256 ?? null, prepared },
-      origin,
-    );
+    const thumbnailSha256 = thumbnail?.sha256 ?? null;
+    return this.register(actor, { kind, name, sha256, thumbnailSha256, prepared }, origin);
   }
 
   private inTurn(prepare: () => Promise<PreparedFile>): Promise<PreparedFile> {

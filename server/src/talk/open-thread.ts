@@ -7,7 +7,7 @@ import { AppError } from '../platform/http/app-error.ts';
 import { newId } from '../platform/ids/ids.ts';
 import { LiveHints, rooms } from '../platform/realtime/live-hints.ts';
 import { ReadThreads } from './read-threads.ts';
-import { INSERT_THREAD, JOIN_SUBCONTRACT, SCOPE_FOR_THREAD, THREAD_OF_CREW } from './talk.queries.ts';
+import { INSERT_THREAD, SCOPE_FOR_THREAD, THREAD_OF_CREW } from './talk.queries.ts';
 
 interface ScopeRow {
   id: string;
@@ -57,13 +57,6 @@ export class OpenThread {
     });
     if (sides !== null) this.tell(threadId, sides);
     return this.threads.one(actor, threadId);
-  }
-
-  /** The thread goes on as the subcontract's: made when there was none. In the award's transaction. */
-  async joinSubcontract(tx: Tx, sides: Sides & { subcontractId: string }): Promise<string> {
-    const row = await this.uow.row<{ id: string }>(tx, JOIN_SUBCONTRACT, values(sides));
-    if (row === null) throw new Error('a thread was neither made nor found');
-    return row.id;
   }
 
   private crewOf(actor: Actor, asked: string | undefined): string {

@@ -10,12 +10,12 @@ import { TalkController } from './talk.controller.ts';
 import { FILE_IN_OWN_THREAD } from './talk.queries.ts';
 import { ThreadAccess } from './thread-access.ts';
 
-/** Threads between a general contractor and one crew. Global: the award joins them, the shell shows what is unread. */
+/** Threads between a general contractor and one crew. Global: the demo talks as people do. */
 @Global()
 @Module({
   controllers: [TalkController],
   providers: [ThreadAccess, ReadThreads, PostMessage, OpenThread, MessageWaiting],
-  exports: [ReadThreads, OpenThread],
+  exports: [OpenThread, PostMessage],
 })
 export class TalkModule implements OnModuleInit {
   constructor(

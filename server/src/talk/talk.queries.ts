@@ -82,11 +82,6 @@ export const INSERT_THREAD = `
 
 export const THREAD_OF_CREW = `SELECT id FROM thread WHERE scope_id = $1 AND crew_company_id = $2`;
 
-export const JOIN_SUBCONTRACT = `
-  INSERT INTO thread AS t (id, scope_id, gc_company_id, crew_company_id, subcontract_id) VALUES ($1, $2, $3, $4, $5)
-  ON CONFLICT (scope_id, crew_company_id) DO UPDATE SET subcontract_id = excluded.subcontract_id
-  RETURNING t.id`;
-
 /** $1 a file, $2 the reader's company: it hangs at a message of a thread of theirs. */
 export const FILE_IN_OWN_THREAD = `
   SELECT 1 AS found FROM message_file f
