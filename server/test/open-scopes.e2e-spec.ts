@@ -1,18 +1,23 @@
 import { distanceMiles } from '@kerfyard/common/places';
 import type { Page } from '@kerfyard/common/api';
 import type { ErrorBody } from '@kerfyard/common/errors';
-import type { ScopeCardView } from '@kerfyard/common/scopes';
+import type { Actor } from '@kerfyard/common/people';
+import { openScopesQuerySchema, type ScopeCardView } from '@kerfyard/common/scopes';
+import { Sequelize } from 'sequelize';
+import { OwnMarks } from '../src/bids/own-marks.ts';
+import { UnitOfWork } from '../src/platform/database/unit-of-work.ts';
+import { ScopeAccess } from '../src/scopes/scope-access.ts';
+import { ScopeLists } from '../src/scopes/scope-lists.ts';
+import { ScopeReader } from '../src/scopes/scope-reader.ts';
 import { Client } from './client.ts';
-import { closeDatabase } from './database.ts';
 import { startQueryCounter } from './query-counter.ts';
-import { startSecondServer } from './second-server.ts';
+import { closeDatabase } from './database.ts';
 import {
   addPerson,
   expectStatus,
   makeCompany,
   makeCuttingContractor,
   makeGeneralContractor,
-  signIn,
   type Company,
 } from './builders/people.ts';
 import {
@@ -169,31 +174,38 @@ describe('the list of open scopes', () => {
   });
 
   it('costs the same few statements for one row and for twenty-five', async () => {
+    for (let n = 0; n < 25; n += 1) await publishScope(gc);
+    // Readers of our own behind the counter: the app's timed jobs would be counted too.
     const counter = await startQueryCounter(process.env.TEST_PG_URL ?? '');
-    const server = await startSecondServer({ DATABASE_URL: counter.url, RATE_LIMIT_FACTOR: '1000' });
-    try {
-      const other = await Promise.all(Array.from({ length: 5 }, () => makeGeneralContractor()));
-      for (let n = 0; n < 25; n += 1) await publishScope(other[n % 5] ?? gc);
-      const client = await signIn(crew.owner.email, undefined, server.url);
-      const cost = async (limit: number): Promise<number> => {
-        const costs: number[] = [];
-        for (let run = 0; run < 4; run += 1) {
-          const before = counter.count('kerfyard-app');
-          const page = await list({ limit }, client);
-          expect(page.items).toHaveLength(limit);
-          costs.push(counter.count('kerfyard-app') - before);
-        }
-        // The least of four: a timed job of the same server may fall into one of them.
-        return Math.min(...costs);
-      };
-      await cost(25);
-      const [one, many] = [await cost(1), await cost(25)];
-      expect(one).toBe(many);
-      expect(many).toBeGreaterThan(2);
-      expect(many).toBeLessThanOrEqual(7);
-    } finally {
-      await server.stop();
-      await counter.close();
-    }
+    const sequelize = new Sequelize(counter.url, {
+      logging: false,
+      dialectOptions: { application_name: 'reader' },
+    });
+    const uow = new UnitOfWork(sequelize);
+    const lists = new ScopeLists(uow, new ScopeAccess(uow), new ScopeReader(uow), new OwnMarks(uow));
+    const { owner } = crew;
+    const actor: Actor = {
+      userId: owner.userId,
+      sessionId: '',
+      name: owner.name,
+      isStaff: false,
+      company: { id: crew.id, kind: 'cutting_contractor', name: crew.name },
+      role: 'owner',
+      limits: { signCents: null, setAsideCents: null, changeCents: null },
+    };
+    const cost = async (limit: number) => {
+      const before = counter.count('reader');
+      const page = await lists.open(actor, openScopesQuerySchema.parse({ limit }));
+      expect(page.items).toHaveLength(limit);
+      return counter.count('reader') - before;
+    };
+    await cost(1);
+    await cost(25);
+    const costs = [await cost(1), await cost(25)];
+    await sequelize.close();
+    await counter.close();
+    expect(costs[0]).toBe(costs[1]);
+    expect(costs[0]).toBeGreaterThanOrEqual(4);
+    expect(costs[0]).toBeLessThanOrEqual(6);
   });
 });

@@ -1,6 +1,7 @@
 import { Injectable } from '@nestjs/common';
 import type { Actor } from '@kerfyard/common/people';
 import {
+  checkDraft,
   methodsOfCuts,
   type ScopeBody,
   type ScopeDraft,
@@ -18,7 +19,6 @@ import { AppError } from '../platform/http/app-error.ts';
 import { JobQueue } from '../platform/jobs/job-queue.ts';
 import { ComeDueJobs } from './come-due-jobs.ts';
 import { SKETCH_LINES } from './draft-face.ts';
-import { readDraft } from './read-draft.ts';
 import { requireCompany } from './require-company.ts';
 import { INSERT_REVISION, INSERT_SCOPE_KEY, LOCK_DRAFT, PUBLISH } from './scope-draft.queries.ts';
 import { ScopeEvents } from './scope-events.ts';
@@ -54,7 +54,7 @@ export class PublishScope {
       if (row.status !== 'draft') throw new AppError('illegal_move');
       if (row.draft_version !== version) throw new AppError('stale_version');
       const now = await this.clock.now(tx);
-      const reading = readDraft(row.draft, now);
+      const reading = checkDraft(row.draft, now);
       if (!reading.ok) throw new AppError('invalid_input', { fields: reading.issues });
       const written = await this.write(tx, { actor, scopeId, now, ...reading });
       await this.audit.write(tx, {

@@ -21,7 +21,7 @@ export class TellCrews {
     await this.uow.run(async (tx) => {
       const crews = await this.uow.rows<{ id: string }>(tx, MATCHING_CREWS, [scopeId, after, PAGE]);
       for (const { id } of crews) {
-        await this.mailer.toCompany(tx, 'scope_published', id, 'bid.write', { scopeId });
+        await this.mailer.toCompany(tx, 'scope_published', id, 'bid.write', { scopeId }, { priority: -1 });
       }
       const last = crews.at(-1);
       if (crews.length === PAGE && last !== undefined) {

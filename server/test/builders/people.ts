@@ -76,7 +76,17 @@ export const makeGeneralContractor = () => makeCompany('general_contractor');
 /** Denver's centre: 80202. */
 export const DENVER = { zip: '80202', lat: 39.7491, lon: -104.9946 } as const;
 
-/** A cutting contractor that may bid: yard, service radius, methods, one crew and one truck. */
+/**
+ * Where this spec's crews and sites lie unless told otherwise: Denver's ZIP code moved by hand to a place of its own,
+ * so that a scope of one spec is not announced by e-mail to the crews of all the others.
+ */
+export const HOME = {
+  zip: DENVER.zip,
+  lat: 31 + Math.random() * 16,
+  lon: -124 + Math.random() * 38,
+} as const;
+
+/** A cutting contractor that may bid: yard (`HOME`), service radius, methods, one crew and one truck. */
 export async function makeCuttingContractor(
   edit: Partial<EditCompany> = {},
 ): Promise<Company & { crewId: string; truckId: string }> {
@@ -85,7 +95,7 @@ export async function makeCuttingContractor(
   const body: EditCompany = {
     name: company.name,
     phone: '+1 555 0100',
-    yard: { ...DENVER },
+    yard: { ...HOME },
     serviceRadiusMi: 150,
     methods: [
       'flat_saw',

@@ -8,7 +8,7 @@ import {
   type ScopeDraft,
 } from '@kerfyard/common/scopes';
 import { sql } from '../database.ts';
-import { DENVER, expectStatus, type Company, type Person } from './people.ts';
+import { expectStatus, HOME, type Company, type Person } from './people.ts';
 
 const DAY_MS = 86_400_000;
 
@@ -30,7 +30,7 @@ export interface DraftOptions {
 }
 
 /**
- * A draft with nothing missing: a trench (84 LF, 504 in-ft) and six cores in Denver, sealed, due in a week; cutting
+ * A draft with nothing missing: a trench (84 LF, 504 in-ft) and six cores near the crews' yard, sealed, due in a week; cutting
  * and slurry are the crew's, the rest is the general contractor's or not needed.
  */
 export function completeDraft(options: DraftOptions = {}): ScopeDraft {
@@ -42,7 +42,7 @@ export function completeDraft(options: DraftOptions = {}): ScopeDraft {
       address: '914 Ninth Street',
       city: 'Denver',
       state: 'CO',
-      ...DENVER,
+      ...HOME,
       timeZone: 'America/Denver',
       contact: 'Gate 2, ask for Imani',
       ...options.site,

@@ -7,6 +7,8 @@ import type { JobName, Jobs } from './queues.ts';
 
 interface SendOptions {
   startAfter?: Date;
+  /** Higher goes first; 0 unless given. */
+  priority?: number;
   singletonKey?: string;
 }
 

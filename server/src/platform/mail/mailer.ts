@@ -66,13 +66,16 @@ export class Mailer implements OnApplicationBootstrap {
     if (addressee !== undefined) this.addressees.set(kind, addressee);
   }
 
-  /** One e-mail to each of these people, not before `startAfter` (wall time). */
+  /**
+   * One e-mail to each of these people, not before `startAfter` (wall time). What goes to many at once takes a priority
+   * below 0, so that nobody waits for an award behind hundreds of announcements.
+   */
   async toUsers(
     tx: Tx,
     kind: string,
     userIds: readonly string[],
     data: MailData,
-    options: { startAfter?: Date } = {},
+    options: { startAfter?: Date; priority?: number } = {},
   ): Promise<void> {
     if (!this.builders.has(kind)) throw new Error(`no builder for the e-mail ${kind}`);
     for (const userId of new Set(userIds)) {
@@ -87,10 +90,11 @@ export class Mailer implements OnApplicationBootstrap {
     companyId: string,
     permission: PermissionName,
     data: MailData,
+    options: { priority?: number } = {},
   ): Promise<void> {
     const people = await this.uow.rows<PersonRow>(tx, PEOPLE_OF_COMPANY, [companyId]);
     const ids = people.filter((person) => mayPerson(person, permission)).map((person) => person.id);
-    await this.toUsers(tx, kind, ids, data);
+    await this.toUsers(tx, kind, ids, data, options);
   }
 
   private async send({ kind, to: userId, mailId, ...data }: Jobs['send_mail']): Promise<void> {
