@@ -20,5 +20,3 @@ const PEOPLE = `
 
 export const SELECT_DEMO_PEOPLE = `${PEOPLE} ORDER BY d.position, d.key`;
 export const SELECT_DEMO_PERSON = `${PEOPLE} AND d.key = $1`;
-/** As the owner role: the app's role may only read this table. */
-export const INSERT_DEMO_PERSON = `INSERT INTO demo_person (key, user_id, position) VALUES ($1, $2, $3)`;

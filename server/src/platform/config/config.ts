@@ -125,3 +125,8 @@ function readMasterKey(file: string, problems: string[]): Buffer {
 function faults(lines: string[]): string {
   return ['The settings have faults:', ...lines.map((line) => `  ${line}`)].join('\n');
 }
+
+/** Where the seeder writes the demo's sign-ins for the start command to print, or null. */
+export function readSignInsFile(env: NodeJS.ProcessEnv = process.env): string | null {
+  return env.DEMO_SIGN_INS_FILE ?? null;
+}
