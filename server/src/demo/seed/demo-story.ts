@@ -20,8 +20,10 @@ export async function tellDemoStory(world: DemoWorld, tell: (line: string) => vo
   tell('A concourse wall waits for signatures');
   await stationAwarded(world, steps);
   tell('Scopes closed, withdrawn and due');
-  await endedScopes(world, steps);
+  const due = await endedScopes(world, steps);
   await world.setDaysAgo(0);
+  // Reading the bids once they are due opens them, as it would on any day.
+  await world.as('wren').get(`/api/scopes/${due}/bids`);
   tell('Scopes are open now');
   await openNow(world, steps);
 }
@@ -105,7 +107,8 @@ async function stationAwarded(world: DemoWorld, steps: DemoSteps): Promise<void>
   await steps.sign('delphine', 'Delphine Marsh', work);
 }
 
-async function endedScopes(world: DemoWorld, steps: DemoSteps): Promise<void> {
+/** Gives the id of a scope whose bids are in when the story ends. */
+async function endedScopes(world: DemoWorld, steps: DemoSteps): Promise<string> {
   await world.setDaysAgo(7);
   const closed = await steps.publish(
     'saoirse',
@@ -136,6 +139,7 @@ async function endedScopes(world: DemoWorld, steps: DemoSteps): Promise<void> {
   await world
     .as('saoirse')
     .post(`/api/scopes/${closed.id}/close`, { reason: 'The second bay is put off to spring.' });
+  return due.id;
 }
 
 async function openNow(world: DemoWorld, steps: DemoSteps): Promise<void> {
