@@ -13,19 +13,13 @@ export interface ActorRow {
   change_limit_cents: string | null;
 }
 
-const COLUMNS = `
-  u.id AS user_id, u.name, u.is_staff, c.id AS company_id, c.kind AS company_kind, c.name AS company_name, m.role,
-  m.sign_limit_cents, m.set_aside_limit_cents, m.change_limit_cents`;
-
-const MEMBERSHIP = `
-  LEFT JOIN membership m ON m.user_id = u.id
-  LEFT JOIN company c ON c.id = m.company_id`;
-
-const ALLOWED = `u.deactivated_at IS NULL AND u.email_verified_at IS NOT NULL`;
-
 /** $1 session, $2 user, $3 idle seconds. One query a request: session, person, membership, company. */
 export const SELECT_ACTOR_OF_SESSION = `
-  SELECT ${COLUMNS} FROM session s JOIN app_user u ON u.id = s.user_id ${MEMBERSHIP}
-  WHERE s.id = $1 AND s.user_id = $2 AND ${live('$3')} AND ${ALLOWED}`;
-
-export const SELECT_ACTOR_OF_USER = `SELECT ${COLUMNS} FROM app_user u ${MEMBERSHIP} WHERE u.id = $1 AND ${ALLOWED}`;
+  SELECT u.id AS user_id, u.name, u.is_staff, c.id AS company_id, c.kind AS company_kind, c.name AS company_name,
+    m.role, m.sign_limit_cents, m.set_aside_limit_cents, m.change_limit_cents
+  FROM session s
+  JOIN app_user u ON u.id = s.user_id
+  LEFT JOIN membership m ON m.user_id = u.id
+  LEFT JOIN company c ON c.id = m.company_id
+  WHERE s.id = $1 AND s.user_id = $2 AND ${live('$3')}
+    AND u.deactivated_at IS NULL AND u.email_verified_at IS NOT NULL`;

@@ -2,7 +2,7 @@ import { Injectable } from '@nestjs/common';
 import type { Actor } from '@kerfyard/common/people';
 import { toNumber } from '../database/codecs.ts';
 import { UnitOfWork } from '../database/unit-of-work.ts';
-import { SELECT_ACTOR_OF_SESSION, SELECT_ACTOR_OF_USER, type ActorRow } from './actor.queries.ts';
+import { SELECT_ACTOR_OF_SESSION, type ActorRow } from './actor.queries.ts';
 import { IDLE_SECONDS } from './session-times.ts';
 
 /** Reads who someone is: person, company, role, limits. */
@@ -15,12 +15,6 @@ export class Actors {
     const bind = [session.sid, session.sub, IDLE_SECONDS];
     const row = await this.uow.row<ActorRow>(null, SELECT_ACTOR_OF_SESSION, bind);
     return row === null ? null : toActor(row, session.sid);
-  }
-
-  /** A person without a session: for the seeder and jobs that act in someone's name. Null when deactivated. */
-  async ofUser(userId: string): Promise<Actor | null> {
-    const row = await this.uow.row<ActorRow>(null, SELECT_ACTOR_OF_USER, [userId]);
-    return row === null ? null : toActor(row, '');
   }
 }
 
