@@ -18,6 +18,8 @@ interface FileUploaderProps {
   /** Files that may still be added. */
   room?: number;
   disabled?: boolean;
+  /** One button with the label as its words, for a place beside other fields. */
+  compact?: boolean;
 }
 
 const accepts: Record<FileKind, string> = {
@@ -29,6 +31,7 @@ const accepts: Record<FileKind, string> = {
 /** Choose or drop several files; each shows how far it is, why it was refused, or a way to try again. */
 export function FileUploader(props: FileUploaderProps) {
   const { kind, label, hint, onUploaded, room = fileLimits.maxFilesPerScope, disabled = false } = props;
+  const { compact = false } = props;
   const { t } = useTranslation();
   const announce = useAnnounce();
   const id = useId();
@@ -51,7 +54,7 @@ export function FileUploader(props: FileUploaderProps) {
   return (
     <div className={styles.uploader}>
       <div
-        className={`${styles.zone} ${over ? styles.over : ''}`}
+        className={`${compact ? styles.compact : styles.zone} ${over ? styles.over : ''}`}
         onDragOver={(event) => {
           event.preventDefault();
           setOver(true);
@@ -59,7 +62,7 @@ export function FileUploader(props: FileUploaderProps) {
         onDragLeave={() => setOver(false)}
         onDrop={drop}
       >
-        <div>
+        <div className={compact ? 'k-hidden' : ''}>
           <Text as="div" size="2" weight="medium" id={`${id}-label`}>
             {label}
           </Text>
@@ -88,10 +91,10 @@ export function FileUploader(props: FileUploaderProps) {
           variant="soft"
           size="3"
           disabled={disabled || room <= 0}
-          aria-describedby={`${id}-label ${id}-hint`}
+          aria-describedby={compact ? `${id}-hint` : `${id}-label ${id}-hint`}
           onClick={() => input.current?.click()}
         >
-          {t('upload.choose')}
+          {compact ? label : t('upload.choose')}
         </Button>
       </div>
       {uploads.items.length > 0 && (

@@ -6,6 +6,7 @@ const drawings = {
   work: 'M3 17h18M3 17V9h8v8M11 12h6l4 3v2M6.5 17a1.5 1.5 0 1 0 .01 0M17 17a1.5 1.5 0 1 0 .01 0',
   money: 'M3 8h18v8H3zM10 8v8M16 8v8',
   company: 'M4 20V9l8-5 8 5v11M4 20h16M9 20v-6h6v6',
+  talk: 'M3 5h13v9H8l-3 3v-3H3zM19 9h2v9h-2v3l-3-3h-5',
   books: 'M5 4h14v16H5zM9 4v16M12 9h4M12 13h4',
 } as const;
 

@@ -16,6 +16,8 @@ export const paths = {
   workItem: (id: string) => `/work/${id}`,
   workMoney: (id: string) => `/work/${id}/money`,
   money: '/money',
+  talk: '/talk',
+  thread: (id: string) => `/talk/${id}`,
   books: '/books',
 } as const;
 

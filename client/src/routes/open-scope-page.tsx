@@ -13,6 +13,7 @@ import { companyQuery } from '../features/company/api/company.queries.ts';
 import { scopeKeys, scopeQuery } from '../features/scopes/api/scope.queries.ts';
 import { ScopeBody } from '../features/scopes/components/scope-body.tsx';
 import { ScopeStatusWord } from '../features/scopes/components/scope-status.tsx';
+import { ScopeTalk } from '../features/talk/components/scope-talk.tsx';
 import { formatNumber } from '../lib/format.ts';
 import { useLiveHints, useWatch } from '../lib/live.ts';
 import { queryClient } from '../lib/query-client.ts';
@@ -74,6 +75,7 @@ function OpenScope({ scope, onDue }: { scope: ScopeDetailView; onDue: () => void
             <DueTime at={scope.dueAt ?? body.bidding.dueAt} timeZone={body.site.timeZone} onPassed={onDue} />
           </div>
           <BidPanel scope={scope} body={body} />
+          <ScopeTalk scopeId={scope.id} gc={scope.gc} />
         </div>
       </div>
     </Page>

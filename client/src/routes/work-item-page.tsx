@@ -13,6 +13,8 @@ import { Loading, QueryErrorState } from '../components/states.tsx';
 import { CompletionCard } from '../features/completions/components/completion-card.tsx';
 import { CompletionForm } from '../features/completions/components/completion-form.tsx';
 import { useCan } from '../features/session/hooks/use-session.ts';
+import { TalkSection } from '../features/talk/components/talk-section.tsx';
+import { ThreadPanel } from '../features/talk/components/thread-panel.tsx';
 import { ProposeVisit } from '../features/visits/components/propose-visit.tsx';
 import { VisitCard } from '../features/visits/components/visit-card.tsx';
 import { subcontractQuery } from '../features/work/api/work.queries.ts';
@@ -48,7 +50,7 @@ export default function WorkItemPage() {
 }
 
 function Subcontract({ subcontract }: { subcontract: SubcontractView }) {
-  const { t } = useTranslation('work');
+  const { t } = useTranslation(['work', 'talk']);
   const can = useCan();
   const other = subcontract.side === 'gc' ? subcontract.crew : subcontract.gc;
   const { site } = subcontract;
@@ -78,6 +80,9 @@ function Subcontract({ subcontract }: { subcontract: SubcontractView }) {
           </div>
           <div className={styles.stack}>
             <Paper subcontract={subcontract} canSign={can('subcontract.sign')} />
+            <TalkSection title={t('talk:with', { name: other.name })}>
+              <ThreadPanel threadId={subcontract.threadId} />
+            </TalkSection>
             <Cuts subcontract={subcontract} />
           </div>
         </div>

@@ -5,7 +5,7 @@ export const routes: readonly FeatureRoute[] = [
   {
     path: '/work/:subcontractId',
     audience: 'company',
-    words: ['work', 'visits', 'completions', 'money'],
+    words: ['work', 'visits', 'completions', 'money', 'talk'],
     page: () => import('./work-item-page.tsx'),
   },
 ];

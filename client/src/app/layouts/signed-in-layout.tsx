@@ -7,7 +7,8 @@ import { AppShell, type NavItem } from '../../components/app-shell.tsx';
 import { LineStateMark } from '../../components/line-state.tsx';
 import { meQuery } from '../../features/session/api/session.queries.ts';
 import { AccountMenu } from '../../features/session/components/account-menu.tsx';
-import { refetchAfterGaps, useLine, useLiveHints } from '../../lib/live.ts';
+import { TalkLink } from '../../features/talk/components/talk-link.tsx';
+import { refetchAfterGaps, useLine } from '../../lib/live.ts';
 import { homeOf, paths } from '../../lib/paths.ts';
 import { line } from '../../lib/socket.ts';
 
@@ -15,10 +16,8 @@ type Translate = (key: string) => string;
 
 /** Navigation by what a person came for, in trade words. */
 function navigationOf(me: MeView, t: Translate): NavItem[] {
-  const waiting = me.unread.messages;
-  const work: NavItem = { to: paths.work, label: t('nav.work'), picture: 'work', waiting };
   const shared: NavItem[] = [
-    work,
+    { to: paths.work, label: t('nav.work'), picture: 'work' },
     { to: paths.money, label: t('nav.money'), picture: 'money' },
     { to: paths.company, label: t('nav.company'), picture: 'company' },
   ];
@@ -38,7 +37,6 @@ export function SignedInLayout() {
   const { t } = useTranslation();
   const { data: me } = useQuery(meQuery);
   useLiveLine(me?.user.id);
-  useLiveHints({ thread: () => [meQuery.queryKey] });
   const state = useLine();
   if (me === undefined || me === null) return <Navigate to={paths.home} replace />;
   const home = homeOf({ isStaff: me.user.isStaff, kind: me.company?.kind ?? null });
@@ -49,6 +47,7 @@ export function SignedInLayout() {
       side={
         <>
           <LineStateMark state={state} />
+          {me.company !== null && <TalkLink />}
           <AccountMenu me={me} />
         </>
       }

@@ -36,7 +36,7 @@ export function LineFields({ line, index, control }: { line: CutLine; index: num
         <Figure
           label={t('line.quantity')}
           value={quantity}
-          unit={t(`units.${unit}`)}
+          unit={unit === 'each' || unit === 'lump' ? '' : t(`units.${unit}`)}
           working={takeoff.working}
         />
       </div>
