@@ -24,6 +24,7 @@ const workspaces = {
       'client/package.json',
       'client/vite.config.ts',
       'client/index.html',
+      'client/scripts',
       'client/public',
       'client/src',
     ],
@@ -84,13 +85,14 @@ function removeOrphans(name) {
  */
 export async function buildStale(names = ['common', 'server', 'client'], { tolerant = false } = {}) {
   const built = [];
+  const env = { ...process.env, NO_COLOR: '1', FORCE_COLOR: '0' }; // what is shown of it is cut into lines
   for (const name of names) {
     const hash = sourceHash(name);
     if (isFresh(name, hash)) continue;
     built.push(name);
     removeOrphans(name);
     const { code, output } = await step(`Building ${name}`, (onLine) =>
-      run('npm', ['run', 'build', '-w', name, '--silent'], { onLine, allowFailure: true }),
+      run('npm', ['run', 'build', '-w', name, '--silent'], { env, onLine, allowFailure: true }),
     );
     if (code === 0) stamp(name, hash);
     else if (tolerant) console.error(`The build of ${name} failed; going on with what is built.\n${output}`);
