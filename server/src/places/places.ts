@@ -4,7 +4,7 @@ import zipcodes from 'zipcodes';
 import type { PlaceView } from '@kerfyard/common/places';
 
 /**
- * ZIP centroids of the package `zipcodes` (BSD licence; positions from GeoNames postal codes, CC BY 4.0) and time zones
+ * ZIP centroids of the package `zipcodes` (BSD licence; its README names a public list of U.S. ZIP codes) and time zones
  * of `@photostructure/tz-lookup` (CC0; boundaries from timezone-boundary-builder, ODbL). Both are coarse: a person may
  * move the position, and near a zone's edge the zone may need another look.
  */

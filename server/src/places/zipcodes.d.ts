@@ -1,4 +1,4 @@
-/** The part of `zipcodes` (BSD licence; positions from GeoNames, CC BY 4.0) that we use. */
+/** The part of `zipcodes` (BSD licence) that we use. */
 declare module 'zipcodes' {
   interface ZipRecord {
     zip: string;
