@@ -49,7 +49,9 @@ export class DemoWorld {
   /** The app's time. */
   async now(): Promise<Date> {
     const { rows } = await this.owner.query<{ now: Date }>(NOW);
-    return rows[0]?.now ?? new Date();
+    const [row] = rows;
+    if (row === undefined) throw new Error('app_now() gave no row');
+    return row.now;
   }
 
   async inDays(days: number): Promise<Date> {
