@@ -101,21 +101,17 @@ export function useUploads(kind: FileKind, onUploaded: (file: FileView) => void)
     [kind],
   );
 
+  /** Several lanes at once, each sending one file after the other until nothing waits. */
   const pump = useCallback(() => {
-    while (running.current < LANES) {
-      const next = queue.current.shift();
-      if (next === undefined) return;
+    const lane = async () => {
+      for (let next = queue.current.shift(); next !== undefined; next = queue.current.shift()) await send(next);
+      running.current -= 1;
+    };
+    while (running.current < LANES && queue.current.length > 0) {
       running.current += 1;
-      void send(next).finally(() => {
-        running.current -= 1;
-        pumpAgain.current();
-      });
+      void lane();
     }
   }, [send]);
-  const pumpAgain = useRef(pump);
-  useEffect(() => {
-    pumpAgain.current = pump;
-  }, [pump]);
 
   const add = useCallback(
     (files: readonly File[]) => {
