@@ -104,7 +104,8 @@ export function useUploads(kind: FileKind, onUploaded: (file: FileView) => void)
   /** Several lanes at once, each sending one file after the other until nothing waits. */
   const pump = useCallback(() => {
     const lane = async () => {
-      for (let next = queue.current.shift(); next !== undefined; next = queue.current.shift()) await send(next);
+      for (let next = queue.current.shift(); next !== undefined; next = queue.current.shift())
+        await send(next);
       running.current -= 1;
     };
     while (running.current < LANES && queue.current.length > 0) {
