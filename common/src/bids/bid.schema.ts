@@ -10,7 +10,7 @@ const cents = z
   .max(MAX_CENTS, 'At most $10,000,000');
 
 /** What a line's rate is per. The server takes the quantity from the scope's own cut list. */
-export const bidUnits = ['in_ft', 'lf', 'each', 'core_in', 'lump'] as const;
+export const bidUnits = ['in_ft', 'lf', 'sq_ft', 'each', 'core_in', 'lump'] as const;
 export type BidUnit = (typeof bidUnits)[number];
 
 export const bidLineSchema = z.strictObject({

@@ -1,3 +1,4 @@
+export * from './bid-units.ts';
 export * from './bid.schema.ts';
 export * from './bid.rules.ts';
 export * from './bid.views.ts';

@@ -19,13 +19,14 @@ const HAIR = 1e-6;
 const TRIP = 'visit';
 
 /**
- * How much of a unit a cut comes to, in hundredths: inch-feet and linear feet without overcuts (cross cuts are
- * in), cores in inches of depth, `each` by count, `lump` once.
+ * How much of a unit a cut comes to, in hundredths: inch-feet, linear feet and square feet of face without overcuts
+ * (cross cuts are in), cores in inches of depth, `each` by count, `lump` once.
  */
 export function cutQuantity(line: CutLine, takeoff: CutTakeoff, unit: BidUnit): number {
   const amounts: Record<BidUnit, number> = {
     in_ft: takeoff.inchFeet,
     lf: takeoff.sawFt,
+    sq_ft: takeoff.sawSqFt,
     core_in: takeoff.coreInches,
     each: line.cut.count,
     lump: 1,

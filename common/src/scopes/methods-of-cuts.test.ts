@@ -51,6 +51,32 @@ describe('methods a cut list can be done by', () => {
     expect(found).toContain('core_drill');
   });
 
+  it('reach a joint’s own depth, a curb’s height and a bar’s thickness', () => {
+    const joints: CutInput = { kind: 'joints', lengthFt: 60, widthFt: 40, thicknessIn: 6, count: 1 };
+    expect(methodsOfCuts(cuts(joints), outside)).toEqual(['flat_saw', 'joint_saw']);
+    expect(methodsOfCuts(cuts({ kind: 'bar', diameterIn: 1, count: 4 }), outside)).toEqual(['hand_saw']);
+    // A block of 8 in is turned over: 6 in of reach from either face.
+    expect(methodsOfCuts(cuts({ kind: 'block', cutLengthIn: 16, depthIn: 8, count: 4 }), outside)).toEqual([
+      'hand_saw',
+    ]);
+  });
+
+  it('let a wire with its pilots be cut only where the far face is reached', () => {
+    const wire: CutInput = {
+      kind: 'wire',
+      areaSqFt: 40,
+      pilotCores: 2,
+      pilotDiameterIn: 2,
+      depthIn: 36,
+      count: 1,
+    };
+    expect(methodsOfCuts(cuts(wire), { ...outside, below: 'unoccupied' })).toEqual([
+      'wire_saw',
+      'core_drill',
+    ]);
+    expect(methodsOfCuts(cuts(wire), outside)).toEqual([...methods]);
+  });
+
   it('are all of them where no machine fits', () => {
     const giant = cuts({ kind: 'core', diameterIn: 96, depthIn: 8, count: 1 });
     expect(methodsOfCuts(giant, outside)).toEqual([...methods]);

@@ -123,6 +123,7 @@ export const scopeDraftSchema = z.strictObject({
           z.union([
             z.string().max(200),
             z.number(),
+            z.boolean(),
             z.null(),
             z.array(z.string().max(20)).max(4),
             draftSection,

@@ -15,6 +15,8 @@ export interface ScopeTotals {
   coreInches: number;
   crossCutFt: number;
   pieces: number;
+  /** Blocks, pipes and bars cut one by one. */
+  pieceCuts: number;
   removedCuFt: number;
   removedLb: number;
 }

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { cutSchema, readCutList, type CutInput, type CutLine } from './index.ts';
+import { bidUnitsOfKind, cutQuantity } from '../bids/index.ts';
+import { cutKinds, cutSchema, methodsOfCuts, readCutList, type CutInput, type CutLine } from './index.ts';
 
 const CUT_ID = '0192f000-0000-7000-8000-000000000001';
 
@@ -49,6 +50,55 @@ const opening = fc.record({
   }),
   corners: fc.constantFrom('overcut' as const, 'cored' as const, 'square' as const),
 });
+
+const small = typed(0.1, 240);
+const further = fc.oneof(
+  fc.record({
+    kind: fc.constant('stitch' as const),
+    lengthIn: typed(0.5, 120_000),
+    bitDiameterIn: typed(0.25, 96),
+    overlapIn: fc.oneof(typed(0, 120), typed(0, 2)),
+    closed: fc.boolean(),
+    depthIn: typed(0.1, 240),
+    count,
+  }),
+  fc.record({
+    kind: fc.constant('joints' as const),
+    lengthFt,
+    widthFt,
+    thicknessIn: typed(2, 60),
+    spacingFactor: typed(24, 36),
+    capFt: typed(2, 30),
+    count,
+  }),
+  fc.record({
+    kind: fc.constant('wire' as const),
+    areaSqFt: typed(0.1, 1_000_000),
+    pilotCores: fc.integer({ min: 0, max: 10_000 }),
+    pilotDiameterIn: typed(0.25, 96),
+    depthIn: typed(0.1, 240),
+    count,
+  }),
+  fc.record({ kind: fc.constant('curb' as const), lengthFt, heightIn: small, count }),
+  fc.record({ kind: fc.constant('chase' as const), lengthFt, widthIn: small, depthIn: small, count }),
+  fc.record({ kind: fc.constant('block' as const), cutLengthIn: small, depthIn: small, count }),
+  fc.record({ kind: fc.constant('pipe' as const), outsideDiameterIn: small, count }),
+  fc.record({ kind: fc.constant('bar' as const), diameterIn: typed(0.1, 12), count }),
+  fc.record({
+    kind: fc.constant('lip' as const),
+    widthFt,
+    heightIn: typed(0.05, 60),
+    runPerRise: typed(8, 20),
+    count,
+  }),
+);
+const place = {
+  face: 'wall',
+  below: 'unknown',
+  indoors: true,
+  enginesAllowed: false,
+  overcutsAllowed: false,
+} as const;
 
 describe('a cut list through the engine', () => {
   it('sums the worked list: trench 40 × 2 ft of 6 in with 4-ft pieces, two lines and six cores', () => {
@@ -146,5 +196,76 @@ describe('a cut list through the engine', () => {
       { numRuns: 500 },
     );
     expect(taken).toBeGreaterThan(50);
+  });
+
+  it('sums the further kinds: joints, wire, chase, blocks, bars', () => {
+    const reading = readCutList(
+      (
+        [
+          // Joint arithmetic: 60 × 40 ft, 4 in, factor 36 → spacing 12 ft, 340 ft of joints 1 in deep.
+          { kind: 'joints', lengthFt: 60, widthFt: 40, thicknessIn: 4, spacingFactor: 36, count: 1 },
+          { kind: 'wire', areaSqFt: 50, pilotCores: 2, pilotDiameterIn: 2, depthIn: 30, count: 1 },
+          // Two lines of 20 ft, 2 in deep.
+          { kind: 'chase', lengthFt: 20, widthIn: 1, depthIn: 2, count: 1 },
+          { kind: 'block', cutLengthIn: 12, depthIn: 8, count: 10 },
+          { kind: 'bar', diameterIn: 0.75, count: 5 },
+        ] satisfies CutInput[]
+      ).map((cut, index) => lineOf(cut, String(index))),
+    );
+    if (!reading.ok) throw new Error(JSON.stringify(reading.issues));
+    expect(reading.totals).toMatchObject({
+      sawFt: 340 + 40 + 10,
+      inchFeet: 340 * 1 + 40 * 2 + 10 * 8,
+      coreHoles: 2,
+      coreInches: 60,
+      pieceCuts: 15,
+    });
+  });
+
+  it('answers every accepted cut of the further kinds with totals, methods and a price, or an issue at its field', () => {
+    const taken = new Map<string, number>();
+    fc.assert(
+      fc.property(further, (typedCut) => {
+        const parsed = cutSchema.safeParse(typedCut);
+        expect(parsed.success).toBe(true);
+        if (!parsed.success) return;
+        expect(methodsOfCuts([parsed.data], place).length).toBeGreaterThan(0);
+        const cutLine = lineOf(typedCut);
+        const reading = readCutList([cutLine]);
+        if (!reading.ok) {
+          for (const { path } of reading.issues) expect(Object.keys(typedCut)).toContain(path.split('.')[3]);
+          return;
+        }
+        taken.set(typedCut.kind, (taken.get(typedCut.kind) ?? 0) + 1);
+        for (const total of Object.values(reading.totals)) expect(Number.isFinite(total)).toBe(true);
+        const takeoff = reading.byCutId.get(CUT_ID);
+        if (takeoff === undefined) throw new Error('not taken off');
+        for (const unit of bidUnitsOfKind[typedCut.kind]) {
+          expect(Number.isSafeInteger(cutQuantity(cutLine, takeoff, unit))).toBe(true);
+        }
+        expect(cutQuantity(cutLine, takeoff, 'each')).toBe(typedCut.count * 100);
+      }),
+      { numRuns: 1500 },
+    );
+    expect([...taken.keys()].sort()).toEqual(
+      ['bar', 'block', 'chase', 'curb', 'joints', 'lip', 'pipe', 'stitch', 'wire'].sort(),
+    );
+  });
+
+  it('says of joints too many for their panels which field of the cut to change', () => {
+    const reading = readCutList([
+      lineOf({ kind: 'joints', lengthFt: 100_000, widthFt: 0.1, thicknessIn: 6, count: 1 }),
+    ]);
+    expect(reading.ok).toBe(false);
+    if (reading.ok) return;
+    expect(reading.issues[0]?.path).toBe('cuts.0.cut.widthFt');
+  });
+
+  it('refuses fields of another kind, and sizes beyond the engine', () => {
+    const bar = { kind: 'bar', diameterIn: 0.5, count: 1 };
+    expect(cutSchema.safeParse({ ...bar, depthIn: 3 }).success).toBe(false);
+    expect(cutSchema.safeParse({ ...bar, diameterIn: 13 }).success).toBe(false);
+    expect(cutSchema.safeParse({ kind: 'notch', count: 1 }).success).toBe(false);
+    expect(cutKinds.map((kind) => bidUnitsOfKind[kind].length > 1)).toEqual(cutKinds.map(() => true));
   });
 });

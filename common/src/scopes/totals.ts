@@ -17,6 +17,7 @@ const noTotals: ScopeTotals = {
   coreInches: 0,
   crossCutFt: 0,
   pieces: 0,
+  pieceCuts: 0,
   removedCuFt: 0,
   removedLb: 0,
 };
@@ -49,8 +50,13 @@ function takeoffOrIssue(line: CutLine, index: number): CutTakeoff | FieldIssue {
     if (!(error instanceof CuttingInputError)) throw error;
     // The engine writes list places as `removal[0]`; paths of issues are dotted throughout.
     const field = error.field.replaceAll('[', '.').replaceAll(']', '');
-    return { path: `cuts.${index}.cut.${field}`, message: `Must be ${error.allowed}` };
+    return { path: `cuts.${index}.cut.${fieldOfCut(line, field)}`, message: `Must be ${error.allowed}` };
   }
+}
+
+/** Joints too many for their panels' shape are said of `maxAspect`, which no cut has: the slab's width is what helps. */
+function fieldOfCut({ cut }: CutLine, field: string): string {
+  return cut.kind === 'joints' && field === 'maxAspect' ? 'widthFt' : field;
 }
 
 function addTakeoff(totals: ScopeTotals, takeoff: CutTakeoff, count: number): void {
@@ -61,6 +67,7 @@ function addTakeoff(totals: ScopeTotals, takeoff: CutTakeoff, count: number): vo
   totals.coreHoles += takeoff.coreHoles;
   totals.coreInches += takeoff.coreInches;
   totals.crossCutFt += takeoff.crossCutFt;
+  totals.pieceCuts += takeoff.pieceCuts;
   totals.removedCuFt += takeoff.removedCuFt;
   totals.removedLb += takeoff.removedLb;
   // `pieces` of a takeoff describes one opening.

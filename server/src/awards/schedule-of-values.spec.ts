@@ -44,6 +44,17 @@ describe('schedule of values', () => {
     expect(rows[1]?.description).toBe('C1: 6 × core 4 in dia., 8 in deep');
   });
 
+  it('splits a lump also over a wire cut and bars, which have no inch-feet', () => {
+    // 33 sq ft at 16.5 sq ft an hour → 120 min; 30 bars at 2 min → 60 min.
+    const wire: CutLine = {
+      ...trench,
+      cut: { kind: 'wire', areaSqFt: 33, pilotCores: 0, pilotDiameterIn: 2, depthIn: 24, count: 1 },
+    };
+    const bars: CutLine = { ...cores, cut: { kind: 'bar', diameterIn: 0.625, count: 30 } };
+    const rows = scheduleOfValues([wire, bars], { totalCents: 90_000, lines: [], mobilizationCents: 0 });
+    expect(amounts(rows)).toEqual([60_000, 30_000]);
+  });
+
   it('takes the lines of a bid as they are, with mobilization as a line of its own', () => {
     const rows = scheduleOfValues(cuts, {
       totalCents: 85_000,

@@ -59,6 +59,8 @@ function fold(rows: SovRow[]): SovRow[] {
 
 // Common practice, no source: middle of the engine's production ranges for sawing; cores by diameter, with set-up.
 const sawInchFeetPerMinute = 7.5;
+const wireSqFtPerMinute = 16.5 / 60;
+const minutesPerPiece = 2;
 const coreSetUpMinutes = 10;
 const coreInchesPerMinute: readonly { upToIn: number; rate: number }[] = [
   { upToIn: 3, rate: 1 },
@@ -69,8 +71,14 @@ const coreInchesPerMinute: readonly { upToIn: number; rate: number }[] = [
 /** Minutes of work in each cut: the common measure in which saw lines and cores can share one lump. */
 function workOf(cuts: readonly CutLine[]): number[] {
   return takeoffCutList({ cuts: cuts.map((line) => line.cut) }).cuts.map(
-    (takeoff) => takeoff.inchFeet / sawInchFeetPerMinute + coreMinutes(takeoff),
+    (takeoff) => sawMinutes(takeoff) + coreMinutes(takeoff),
   );
+}
+
+/** A wire cut is measured by its face; pipes and bars, which have no depth of saw cut, by the piece. */
+function sawMinutes({ kind, inchFeet, sawSqFt, pieceCuts }: CutTakeoff): number {
+  if (kind === 'wire') return sawSqFt / wireSqFtPerMinute;
+  return inchFeet > 0 ? inchFeet / sawInchFeetPerMinute : pieceCuts * minutesPerPiece;
 }
 
 function coreMinutes(takeoff: CutTakeoff): number {

@@ -24,6 +24,7 @@ const noTotals: ScopeTotals = {
   coreInches: 0,
   crossCutFt: 0,
   pieces: 0,
+  pieceCuts: 0,
   removedCuFt: 0,
   removedLb: 0,
 };

@@ -5,6 +5,15 @@ const kindWords: Record<CutKind, string> = {
   trench: 'Trench',
   opening: 'Opening',
   core: 'Core',
+  stitch: 'Stitch drilling',
+  joints: 'Contraction joints',
+  wire: 'Wire-saw cut',
+  curb: 'Curb cut',
+  chase: 'Chase',
+  block: 'Block cut',
+  pipe: 'Pipe cut',
+  bar: 'Bar cut',
+  lip: 'Lip',
 };
 
 /** A number as people write it: at most two decimals, no trailing zeros, thousands apart. */
@@ -29,31 +38,68 @@ export function cutSize(cut: CutData): string {
       return `${figure(cut.diameterIn)} in dia., ${figure(cut.depthIn)} in deep`;
     case 'trench':
     case 'opening':
+    case 'joints':
       return `${figure(cut.lengthFt)} × ${figure(cut.widthFt)} ft, ${figure(cut.thicknessIn)} in thick`;
+    case 'stitch':
+      return `${figure(cut.lengthIn)} in along the holes, ${figure(cut.bitDiameterIn)} in bit, ${figure(cut.depthIn)} in deep`;
+    case 'wire':
+      return `${figure(cut.areaSqFt)} sq ft of face`;
+    case 'curb':
+      return `${figure(cut.lengthFt)} ft, ${figure(cut.heightIn)} in high`;
+    case 'chase':
+      return `${figure(cut.lengthFt)} ft, ${figure(cut.widthIn)} in wide, ${figure(cut.depthIn)} in deep`;
+    case 'block':
+      return `${figure(cut.cutLengthIn)} in long, ${figure(cut.depthIn)} in deep`;
+    case 'pipe':
+      return `${figure(cut.outsideDiameterIn)} in outside dia.`;
+    case 'bar':
+      return `${figure(cut.diameterIn)} in dia.`;
+    case 'lip':
+      return `${figure(cut.widthFt)} ft wide, ${figure(cut.heightIn)} in high`;
   }
 }
 
-/** What else decides the work of a cut: sides left uncut, corners, pieces. Empty when nothing does. */
+/** What else decides the work of a cut: sides left uncut, corners, pieces, pilots. Empty when nothing does. */
 export function cutDetails(cut: CutData): string {
-  if (cut.kind === 'line' || cut.kind === 'core') return '';
-  const details: string[] = [];
-  if (cut.kind === 'trench') {
-    details.push(cut.sideCuts === 2 ? 'both sides cut' : 'one side cut');
-    details.push(`${cut.endCuts === 0 ? 'no' : cut.endCuts} end cut${cut.endCuts === 1 ? '' : 's'}`);
-  } else {
-    details.push(
-      cut.corners === 'overcut'
-        ? 'corners overcut'
-        : cut.corners === 'cored'
-          ? 'corners cored'
-          : 'square corners, no overcuts',
-    );
-    if (cut.uncutSides !== undefined && cut.uncutSides.length > 0) {
-      details.push(`not cut: ${cut.uncutSides.join(', ')}`);
-    }
+  switch (cut.kind) {
+    case 'trench':
+      return [...trenchDetails(cut), ...pieceDetails(cut)].join('; ');
+    case 'opening':
+      return [...openingDetails(cut), ...pieceDetails(cut)].join('; ');
+    case 'stitch':
+      return `${cut.closed ? 'closed loop' : 'open line'}; holes overlap ${figure(cut.overlapIn)} in`;
+    case 'joints':
+      return `spacing ${figure(cut.spacingFactor)} thicknesses, at most ${figure(cut.capFt)} ft`;
+    case 'wire':
+      return cut.pilotCores === 0
+        ? 'no pilot cores'
+        : `${figure(cut.pilotCores)} pilot core${cut.pilotCores === 1 ? '' : 's'} ${figure(cut.pilotDiameterIn)} in dia., ${figure(cut.depthIn)} in deep`;
+    case 'lip':
+      return `ramp at 1 in ${figure(cut.runPerRise)}`;
+    default:
+      return '';
   }
-  if (cut.removal !== undefined) details.push(`pieces to ${figure(cut.removal.maxPieceLb)} lb`);
-  return details.join('; ');
+}
+
+function trenchDetails({ sideCuts, endCuts }: Extract<CutData, { kind: 'trench' }>): string[] {
+  return [
+    sideCuts === 2 ? 'both sides cut' : 'one side cut',
+    `${endCuts === 0 ? 'no' : endCuts} end cut${endCuts === 1 ? '' : 's'}`,
+  ];
+}
+
+const cornerWords = {
+  overcut: 'corners overcut',
+  cored: 'corners cored',
+  square: 'square corners, no overcuts',
+} as const;
+
+function openingDetails({ corners, uncutSides = [] }: Extract<CutData, { kind: 'opening' }>): string[] {
+  return [cornerWords[corners], ...(uncutSides.length > 0 ? [`not cut: ${uncutSides.join(', ')}`] : [])];
+}
+
+function pieceDetails({ removal }: Extract<CutData, { removal?: unknown }>): string[] {
+  return removal === undefined ? [] : [`pieces to ${figure(removal.maxPieceLb)} lb`];
 }
 
 /** One line of the cut list in words, as a schedule of values and a mail say it. */

@@ -1,4 +1,10 @@
-import { bidInputSchema, type BidInput, type BidUnit, type OwnBidView } from '@kerfyard/common/bids';
+import {
+  bidInputSchema,
+  usualUnit,
+  type BidInput,
+  type BidUnit,
+  type OwnBidView,
+} from '@kerfyard/common/bids';
 import type { ResponsibilityItem, ScopeBody } from '@kerfyard/common/scopes';
 import { z } from 'zod';
 
@@ -31,7 +37,7 @@ export function emptyBid(body: ScopeBody): BidFormValues {
     lumpCents: null,
     lines: body.cuts.map((line) => ({
       cutId: line.id,
-      unit: line.cut.kind === 'core' ? 'each' : 'in_ft',
+      unit: usualUnit(line.cut.kind),
       rateCents: null,
     })),
     minimumCents: 0,

@@ -1,4 +1,4 @@
-import { cutQuantity, type BidUnit } from '@kerfyard/common/bids';
+import { bidUnitsOfKind, cutQuantity } from '@kerfyard/common/bids';
 import { describeCut, takeoffCut } from '@kerfyard/common/cutting';
 import type { BidInput } from '@kerfyard/common/bids';
 import type { CutLine } from '@kerfyard/common/scopes';
@@ -11,13 +11,6 @@ import { MoneyField } from '../../../components/form/number-fields.tsx';
 import { Figure } from '../../../components/figure.tsx';
 import type { BidFormValues } from '../bid-form-values.ts';
 import styles from './bids.module.css';
-
-const unitsOf: Record<CutLine['cut']['kind'], readonly BidUnit[]> = {
-  line: ['in_ft', 'lf', 'each', 'lump'],
-  trench: ['in_ft', 'lf', 'each', 'lump'],
-  opening: ['in_ft', 'lf', 'each', 'lump'],
-  core: ['each', 'core_in', 'lump'],
-};
 
 type BidControl = Control<BidFormValues, unknown, BidInput>;
 
@@ -44,7 +37,7 @@ export function LineFields({ line, index, control }: { line: CutLine; index: num
         control={control}
         name={`lines.${index}.unit`}
         label={t('line.per')}
-        options={unitsOf[line.cut.kind].map((value) => ({ value, label: t(`per.${value}`) }))}
+        options={bidUnitsOfKind[line.cut.kind].map((value) => ({ value, label: t(`per.${value}`) }))}
       />
       <MoneyField
         control={control}
