@@ -8,7 +8,7 @@ import type { CutLine } from '@kerfyard/common/scopes';
 import type { SovLineView, SubcontractView } from '@kerfyard/common/subcontracts';
 import type { VisitView } from '@kerfyard/common/visits';
 import { Button, Heading, Text } from '@radix-ui/themes';
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import { useWatch, type Control } from 'react-hook-form';
 import { useTranslation } from 'react-i18next';
 import { FileThumb } from '../../../components/file-thumb.tsx';
@@ -43,13 +43,13 @@ export function CompletionForm({ subcontract, visit }: { subcontract: Subcontrac
   });
   const chosen = useWatch({ control: form.control, name: 'sovLineIds' });
   const chosenCuts = new Set(lines.filter((line) => chosen.includes(line.id)).flatMap((line) => line.cutIds));
-  const setFiles = (next: FileView[]) => {
-    setPhotos(next);
+  // Several photos may arrive between two renders, so each is added to what is there then.
+  useEffect(() => {
     form.setValue(
       'photoIds',
-      next.map((file) => file.id),
+      photos.map((file) => file.id),
     );
-  };
+  }, [form, photos]);
   const allAsListed = () =>
     cuts.forEach((_, index) => form.setValue(`asCut.${index}.asListed`, true, { shouldDirty: true }));
   return (
@@ -63,7 +63,7 @@ export function CompletionForm({ subcontract, visit }: { subcontract: Subcontrac
       <FileUploader
         kind="photo"
         label={t('form.photos')}
-        onUploaded={(file) => setFiles([...photos, file])}
+        onUploaded={(file) => setPhotos((before) => [...before, file])}
       />
       {photos.length > 0 && (
         <div className={styles.photos}>
@@ -71,7 +71,7 @@ export function CompletionForm({ subcontract, visit }: { subcontract: Subcontrac
             <FileThumb
               key={file.id}
               file={file}
-              onRemove={() => setFiles(photos.filter((one) => one.id !== file.id))}
+              onRemove={() => setPhotos((before) => before.filter((one) => one.id !== file.id))}
             />
           ))}
         </div>
