@@ -9,6 +9,7 @@ import { Incidents } from './incidents.ts';
 import { Operations } from './operations.ts';
 import { PaymentsController } from './payments.controller.ts';
 import { Payouts } from './payouts.ts';
+import { Reconciliation } from './reconcile.ts';
 import { ReleaseService } from './releases.ts';
 import { SetAsideService } from './set-aside.ts';
 import { StaffBooks } from './staff-books.ts';
@@ -33,6 +34,7 @@ import { WebhooksController } from './webhooks.controller.ts';
     StaffBooks,
     MoneyMails,
     MoneySweep,
+    Reconciliation,
   ],
 })
 export class PaymentsModule {}

@@ -5,7 +5,13 @@ import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
 import { LiveHints, rooms } from '../platform/realtime/live-hints.ts';
 import { readStripeError, STRIPE, type StripeClient } from '../platform/stripe/stripe-client.ts';
-import { COMPANY_BY_ACCOUNT, LOCK_COMPANY, SET_PAYOUT_ACCOUNT, SET_PAYOUT_STATE } from './payouts.queries.ts';
+import {
+  COMPANY_BY_ACCOUNT,
+  COMPANY_BY_ID,
+  LOCK_COMPANY,
+  SET_PAYOUT_ACCOUNT,
+  SET_PAYOUT_STATE,
+} from './payouts.queries.ts';
 import { StripeEvents } from './stripe-events.ts';
 import { Transfers } from './transfers.ts';
 
@@ -37,7 +43,7 @@ export class Payouts implements OnModuleInit {
   /** The address of the provider's set-up page; single use, so a new one each time. */
   async onboardingUrl(actor: Actor): Promise<{ url: string }> {
     const companyId = actor.company?.id ?? '';
-    const company = await this.uow.row<CompanyRow>(null, LOCK_COMPANY, [companyId]);
+    const company = await this.uow.row<CompanyRow>(null, COMPANY_BY_ID, [companyId]);
     if (company === null) throw new AppError('not_found');
     try {
       const account = company.payout_account_id ?? (await this.createAccount(company));
@@ -57,7 +63,7 @@ export class Payouts implements OnModuleInit {
 
   /** Coming back from the page does not mean complete: read the account as it stands. */
   async refresh(actor: Actor): Promise<void> {
-    const company = await this.uow.row<CompanyRow>(null, LOCK_COMPANY, [actor.company?.id ?? '']);
+    const company = await this.uow.row<CompanyRow>(null, COMPANY_BY_ID, [actor.company?.id ?? '']);
     if (company?.payout_account_id) await this.readAccount(company.payout_account_id);
   }
 

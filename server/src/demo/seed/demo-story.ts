@@ -1,8 +1,15 @@
 import type { CompanyView } from '@kerfyard/common/api';
 import type { OwnCompanyView } from '@kerfyard/common/people';
 import { hospital, hospitalSleeves, mill, station, trench, warehouse } from './demo-scopes.ts';
+import type { DemoPhotoName } from '../photos/index.ts';
 import { DemoSteps } from './demo-steps.ts';
 import type { DemoWorld } from './demo-world.ts';
+
+const storyPhotos: readonly DemoPhotoName[] = [
+  'trench_marked_on_pavement',
+  'trench_sawn',
+  ...[hospital, mill, station, warehouse].flatMap((scope) => scope.photos.map(([name]) => name)),
+];
 
 /**
  * Three weeks of invented work, so that every list has something in each state: drafts, open scopes with sealed and
@@ -11,6 +18,7 @@ import type { DemoWorld } from './demo-world.ts';
 export async function tellDemoStory(world: DemoWorld, tell: (line: string) => void): Promise<void> {
   const steps = new DemoSteps(world);
   await world.setDaysAgo(24);
+  await steps.drawAhead(storyPhotos);
   tell('People sign up and companies open');
   await world.castAll();
   tell('A trench is bid, awarded, cut and paid for');
