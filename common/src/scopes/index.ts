@@ -1,3 +1,4 @@
+export * from './check-draft.ts';
 export * from './cut.schema.ts';
 export * from './responsibilities.ts';
 export * from './scope.schema.ts';

@@ -27,7 +27,8 @@ function showNumber(value: unknown): string {
   return typeof value === 'number' ? String(value) : typeof value === 'string' ? value : '';
 }
 
-function showCents(value: unknown): string {
+/** Whole cents as dollars for an input: 123450 → `1,234.50`. */
+export function showCents(value: unknown): string {
   if (typeof value !== 'number') return showNumber(value);
   const cents = value % 100;
   const dollars = String((value - cents) / 100).replace(/\B(?=(\d{3})+$)/g, ',');
@@ -91,13 +92,28 @@ function FigureInput({ wiring, before, unit, disabled, typed, field }: FigureInp
   );
 }
 
-/** A number with its unit beside it. The form's value is a number, or null when nothing is typed. */
+/** Kept in a smaller unit than typed: percent typed, basis points kept, with 100. */
+function scaledReading(scale: number): Reading {
+  return {
+    read: (text) => {
+      const typed = readNumber(text);
+      return typeof typed === 'number' ? Math.round(typed * scale) : typed;
+    },
+    show: (value) => showNumber(typeof value === 'number' ? value / scale : value),
+  };
+}
+
+/**
+ * A number with its unit beside it. The form's value is a number, or null when nothing is typed; with `scale` it is
+ * the typed number times that, rounded.
+ */
 export function NumberField<Input extends FieldValues, Output>(
-  props: Bound<Input, Output> & FieldWords & { unit?: string; disabled?: boolean },
+  props: Bound<Input, Output> & FieldWords & { unit?: string; scale?: number; disabled?: boolean },
 ) {
-  const { control, name, label, hint, optional, unit, disabled = false } = props;
+  const { control, name, label, hint, optional, unit, scale, disabled = false } = props;
   const { field, fieldState } = useController({ control, name });
-  const typed = useTypedText(field.value, field.onChange, { read: readNumber, show: showNumber });
+  const reading = scale === undefined ? { read: readNumber, show: showNumber } : scaledReading(scale);
+  const typed = useTypedText(field.value, field.onChange, reading);
   return (
     <FieldFrame
       name={name}

@@ -3,7 +3,7 @@ import { Heading, Text } from '@radix-ui/themes';
 import type { ReactNode } from 'react';
 import { useTranslation } from 'react-i18next';
 import { CutSketch } from '../../../components/cut-sketch.tsx';
-import { FileThumb } from '../../../components/file-thumb.tsx';
+import { FileThumbs } from '../../../components/file-thumb.tsx';
 import { formatDate, formatPercent } from '../../../lib/format.ts';
 import { CutTable } from './cut-table.tsx';
 import { ResponsibilityTable } from './responsibility-table.tsx';
@@ -24,11 +24,7 @@ export function ScopeBody({ scope, body }: { scope: ScopeDetailView; body: Body 
       {body.summary !== '' && <Text as="p">{body.summary}</Text>}
       {scope.files.length > 0 && (
         <Section title={t('body.files')}>
-          <div className={styles.files}>
-            {scope.files.map((file) => (
-              <FileThumb key={file.id} file={file} />
-            ))}
-          </div>
+          <FileThumbs files={scope.files} />
         </Section>
       )}
       <ScopeCautions conditions={body.conditions} cuts={body.cuts} />
