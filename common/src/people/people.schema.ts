@@ -35,6 +35,8 @@ export type SignUp = z.infer<typeof signUpSchema>;
 export const signInSchema = z.strictObject({
   email: emailSchema,
   password: z.string().min(1, 'Your password').max(128),
+  /** Of the second factor, where there is one: six digits, or a recovery code. */
+  code: z.string().trim().min(6, 'Six digits, or a recovery code').max(60).optional(),
 });
 export type SignIn = z.infer<typeof signInSchema>;
 

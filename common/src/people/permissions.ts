@@ -17,6 +17,7 @@ const office: readonly Role[] = ['owner', 'accounts', 'manager'];
 export const permissions = {
   'company.read': { kind: 'either', roles: everyone },
   'company.edit': { kind: 'either', roles: ['owner', 'manager'] },
+  'people.manage': { kind: 'either', roles: ['owner'] },
   'scope.read': { kind: 'either', roles: everyone },
   'scope.write': { kind: 'general_contractor', roles: deciders },
   'scope.award': { kind: 'general_contractor', roles: deciders },

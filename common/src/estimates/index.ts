@@ -1,0 +1,2 @@
+export * from './estimate.types.ts';
+export { estimateJob } from './estimate-job.ts';
