@@ -8,6 +8,7 @@ const appendOnly = [
   'ledger_account',
   'ledger_entry',
   'ledger_posting',
+  'ledger_seal',
 ];
 const readOnly = ['app_clock', 'schema_migration', 'demo_person'];
 

@@ -16,6 +16,7 @@ import {
 import type { Actor } from '@kerfyard/common/people';
 import { CurrentActor, Needs, RequestOrigin, type Origin } from '../platform/auth/access.decorators.ts';
 import { Payouts } from './payouts.ts';
+import { Reconciliation, type Difference } from './reconcile.ts';
 import { ReleaseService } from './releases.ts';
 import { SetAsideService } from './set-aside.ts';
 import { StaffBooks } from './staff-books.ts';
@@ -32,6 +33,7 @@ export class PaymentsController {
     private readonly payouts: Payouts,
     private readonly statements: Statements,
     private readonly books: StaffBooks,
+    private readonly reconciliation: Reconciliation,
   ) {}
 
   /** What it would cost to set these lines aside; nothing is stored. */
@@ -96,5 +98,13 @@ export class PaymentsController {
   @Needs('staff.read')
   readBooks(): Promise<BooksView> {
     return this.books.read();
+  }
+
+  /** Compare with the provider now; what differs is an incident from then on. */
+  @Post('staff/books/reconcile')
+  @HttpCode(200)
+  @Needs('staff.read')
+  async reconcile(): Promise<{ differences: Difference[] }> {
+    return { differences: await this.reconciliation.run() };
   }
 }
