@@ -10,6 +10,7 @@ import { DemoModule } from './demo/demo.module.ts';
 import { FilesModule } from './files/files.module.ts';
 import { PeopleModule } from './people/people.module.ts';
 import { PlacesModule } from './places/places.module.ts';
+import { RatesModule } from './rates/rates.module.ts';
 import { AuthModule } from './platform/auth/auth.module.ts';
 import type { Config } from './platform/config/config.ts';
 import { HttpModule } from './platform/http/http.module.ts';
@@ -27,6 +28,7 @@ const features: NonNullable<DynamicModule['imports']> = [
   TalkModule,
   ScopesModule,
   BidsModule,
+  RatesModule,
   AwardsModule,
   SubcontractsModule,
   VisitsModule,

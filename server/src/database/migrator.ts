@@ -4,6 +4,7 @@ import { platform } from './migrations/20261201-0001-platform.ts';
 import { scopesAndBids } from './migrations/20261201-0002-scopes-and-bids.ts';
 import { work } from './migrations/20261201-0003-work.ts';
 import { money } from './migrations/20261201-0004-money.ts';
+import { rateCard } from './migrations/20261201-0005-rate-card.ts';
 import { ledgerSeal } from './migrations/20261201-0010-ledger-seal.ts';
 
 /** Plain SQL, up and down; one transaction each. One that has landed is never edited. */
@@ -13,7 +14,7 @@ export interface Migration {
   down: string;
 }
 
-export const migrations: readonly Migration[] = [platform, scopesAndBids, work, money, ledgerSeal];
+export const migrations: readonly Migration[] = [platform, scopesAndBids, work, money, rateCard, ledgerSeal];
 
 // Two servers starting at once must not migrate twice; any constant number will do.
 const LOCK = 460_001;
