@@ -14,6 +14,8 @@ export interface Column<Row> {
   foot?: ReactNode;
   /** The cell in the CSV; columns without it are left out there. */
   csv?: (row: Row) => string | number | null;
+  /** Left out on a phone, where another cell says it in small. */
+  narrow?: 'hide';
   /** Names the row for those who hear it; the first column unless told. */
   isRowHead?: boolean;
 }
@@ -49,7 +51,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
           <thead>
             <tr>
               {columns.map((column) => (
-                <th key={column.key} scope="col" className={styles[column.align ?? 'left']}>
+                <th key={column.key} scope="col" className={lookOf(column)}>
                   {column.head}
                 </th>
               ))}
@@ -60,11 +62,11 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
               <tr key={rowKey(row)}>
                 {columns.map((column) =>
                   column.key === headKey ? (
-                    <th key={column.key} scope="row" className={styles[column.align ?? 'left']}>
+                    <th key={column.key} scope="row" className={lookOf(column)}>
                       {column.cell(row)}
                     </th>
                   ) : (
-                    <td key={column.key} className={styles[column.align ?? 'left']}>
+                    <td key={column.key} className={lookOf(column)}>
                       {column.cell(row)}
                     </td>
                   ),
@@ -76,7 +78,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
             <tfoot>
               <tr>
                 {columns.map((column) => (
-                  <td key={column.key} className={styles[column.align ?? 'left']}>
+                  <td key={column.key} className={lookOf(column)}>
                     {column.foot}
                   </td>
                 ))}
@@ -92,6 +94,10 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
       )}
     </div>
   );
+}
+
+function lookOf<Row>(column: Column<Row>): string {
+  return `${styles[column.align ?? 'left']} ${column.narrow === 'hide' ? styles.narrowHide : ''}`;
 }
 
 /** Arrow up and down: from a link or button to the one in the same column of the next row that has one. */

@@ -80,20 +80,23 @@ function BidRow({ bid }: { bid: BidListItem }) {
         <ScopeStatusWord status={bid.scopeStatus} />
       </div>
       <div className={styles.between}>
-        <StatusWord tone={bid.status === 'withdrawn' ? 'closed' : 'good'}>
-          {t(`own.status.${bid.status}`)}
-        </StatusWord>
-        {bid.rank !== null && <Text>{t('own.rank', { rank: bid.rank, of: bid.of })}</Text>}
+        {bid.outcome === null ? (
+          <span className={styles.row}>
+            <StatusWord tone={bid.status === 'withdrawn' ? 'closed' : 'good'}>
+              {t(`own.status.${bid.status}`)}
+            </StatusWord>
+            {bid.rank !== null && <Text size="2">{t('own.rank', { rank: bid.rank, of: bid.of })}</Text>}
+          </span>
+        ) : (
+          <Outcome outcome={bid.outcome} />
+        )}
         {bid.scopeStatus === 'open' && <DueTime at={bid.dueAt} timeZone={bid.timeZone} />}
-      </div>
-      {bid.outcome !== null && <Outcome outcome={bid.outcome} />}
-      {bid.subcontractId !== null && (
-        <div>
+        {bid.subcontractId !== null && (
           <ButtonLink to={paths.workItem(bid.subcontractId)} variant="soft">
             {t('list.toWork')}
           </ButtonLink>
-        </div>
-      )}
+        )}
+      </div>
     </article>
   );
 }

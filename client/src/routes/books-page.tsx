@@ -44,7 +44,12 @@ function Rules({ checks }: { checks: BooksView['checks'] }) {
     <DataTable
       caption={t('books.checks')}
       columns={[
-        { key: 'rule', head: t('books.rule'), cell: (check) => check.name, csv: (check) => check.name },
+        {
+          key: 'rule',
+          head: t('books.rule'),
+          cell: (check) => <span className={styles.rule}>{check.name}</span>,
+          csv: (check) => check.name,
+        },
         {
           key: 'result',
           head: t('books.result'),
@@ -93,11 +98,17 @@ function Balances({ books }: { books: BooksView['trialBalance'] }) {
             {
               key: 'account',
               head: t('books.account'),
-              cell: (row) => row.code,
+              cell: (row) => <span className={styles.code}>{row.code}</span>,
               csv: (row) => row.code,
               foot: t('books.sum'),
             },
-            { key: 'kind', head: t('books.kind'), cell: (row) => row.kind, csv: (row) => row.kind },
+            {
+              key: 'kind',
+              head: t('books.kind'),
+              cell: (row) => row.kind,
+              csv: (row) => row.kind,
+              narrow: 'hide',
+            },
             {
               key: 'balance',
               head: t('books.balance'),

@@ -1,5 +1,5 @@
 import type { ScopeDetailView } from '@kerfyard/common/scopes';
-import { Text } from '@radix-ui/themes';
+import { Button, Text } from '@radix-ui/themes';
 import { useQuery } from '@tanstack/react-query';
 import { useTranslation } from 'react-i18next';
 import { useParams, type LoaderFunctionArgs } from 'react-router-dom';
@@ -67,7 +67,7 @@ function OpenScope({ scope, onDue }: { scope: ScopeDetailView; onDue: () => void
     >
       <div className={styles.page}>
         <ScopeBody scope={scope} body={body} />
-        <div className={styles.aside}>
+        <div className={styles.aside} id="bidding">
           <div>
             <Text as="div" size="2" color="gray">
               {t(`mode.${body.bidding.mode}`)}, {t('bid:dueAt')}
@@ -78,6 +78,14 @@ function OpenScope({ scope, onDue }: { scope: ScopeDetailView; onDue: () => void
           <ScopeTalk scopeId={scope.id} gc={scope.gc} />
         </div>
       </div>
+      {scope.status === 'open' && (
+        <div className={styles.toBid}>
+          <DueTime at={scope.dueAt ?? body.bidding.dueAt} timeZone={body.site.timeZone} onPassed={onDue} />
+          <Button asChild size="3">
+            <a href="#bidding">{t('bid:own.title')}</a>
+          </Button>
+        </div>
+      )}
     </Page>
   );
 }

@@ -3,7 +3,8 @@ import { useTranslation } from 'react-i18next';
 import { Page } from '../components/page.tsx';
 import { Loading, QueryErrorState } from '../components/states.tsx';
 import { moneyKeys, statementQuery } from '../features/money/api/money.queries.ts';
-import { StatementTable } from '../features/money/components/statement-table.tsx';
+import { StatementTable, StatementTotals } from '../features/money/components/statement-table.tsx';
+import styles from '../features/money/components/money.module.css';
 import { deviceTimeZone } from '../lib/clock.ts';
 import { useLiveHints } from '../lib/live.ts';
 import { queryClient } from '../lib/query-client.ts';
@@ -25,7 +26,10 @@ export default function StatementPage() {
         <QueryErrorState error={statement.error} onRetry={() => void statement.refetch()} />
       )}
       {statement.data !== undefined && (
-        <StatementTable statement={statement.data} timeZone={deviceTimeZone()} />
+        <div className={styles.stack}>
+          {statement.data.lines.length > 0 && <StatementTotals statement={statement.data} />}
+          <StatementTable statement={statement.data} timeZone={deviceTimeZone()} />
+        </div>
       )}
     </Page>
   );

@@ -5,7 +5,7 @@ import { useState } from 'react';
 import { useTranslation } from 'react-i18next';
 import { useParams, type LoaderFunctionArgs } from 'react-router-dom';
 import { CutSketch } from '../components/cut-sketch.tsx';
-import { FileThumb } from '../components/file-thumb.tsx';
+import { FileThumbs } from '../components/file-thumb.tsx';
 import { ButtonLink } from '../components/link.tsx';
 import { MoneyLine } from '../components/money-line.tsx';
 import { Page } from '../components/page.tsx';
@@ -18,6 +18,7 @@ import { ThreadPanel } from '../features/talk/components/thread-panel.tsx';
 import { ProposeVisit } from '../features/visits/components/propose-visit.tsx';
 import { VisitCard } from '../features/visits/components/visit-card.tsx';
 import { subcontractQuery } from '../features/work/api/work.queries.ts';
+import { NextStep } from '../features/work/components/next-step.tsx';
 import { Paper } from '../features/work/components/paper.tsx';
 import { SovTable } from '../features/work/components/sov-table.tsx';
 import { SubcontractStatusWord } from '../features/work/components/subcontract-status.tsx';
@@ -54,6 +55,8 @@ function Subcontract({ subcontract }: { subcontract: SubcontractView }) {
   const can = useCan();
   const other = subcontract.side === 'gc' ? subcontract.crew : subcontract.gc;
   const { site } = subcontract;
+  const isSigned = subcontract.status === 'active' || subcontract.status === 'completed';
+  const paper = <Paper subcontract={subcontract} canSign={can('subcontract.sign')} />;
   return (
     <Page
       title={subcontract.title}
@@ -71,19 +74,28 @@ function Subcontract({ subcontract }: { subcontract: SubcontractView }) {
       }
     >
       <div className={styles.stack}>
-        <MoneyLine money={subcontract.money} />
+        <div className={styles.section}>
+          <MoneyLine money={subcontract.money} />
+          <NextStep subcontract={subcontract} />
+        </div>
         <div className={styles.columns}>
           <div className={styles.stack}>
-            <Visits subcontract={subcontract} />
-            <Completions subcontract={subcontract} />
+            {isSigned ? (
+              <>
+                <Visits subcontract={subcontract} />
+                <Completions subcontract={subcontract} />
+              </>
+            ) : (
+              paper
+            )}
             <SovTable subcontract={subcontract} />
           </div>
           <div className={styles.stack}>
-            <Paper subcontract={subcontract} canSign={can('subcontract.sign')} />
+            <Cuts subcontract={subcontract} />
             <TalkSection title={t('talk:with', { name: other.name })}>
               <ThreadPanel threadId={subcontract.threadId} />
             </TalkSection>
-            <Cuts subcontract={subcontract} />
+            {isSigned && paper}
           </div>
         </div>
       </div>
@@ -99,13 +111,7 @@ function Cuts({ subcontract }: { subcontract: SubcontractView }) {
         {t('item.cuts')}
       </Heading>
       <CutSketch cuts={subcontract.cuts.map((line) => line.cut)} />
-      {subcontract.files.length > 0 && (
-        <div className={styles.photos}>
-          {subcontract.files.map((file) => (
-            <FileThumb key={file.id} file={file} />
-          ))}
-        </div>
-      )}
+      <FileThumbs files={subcontract.files} />
     </section>
   );
 }

@@ -12,7 +12,7 @@ import { Fundings } from '../features/money/components/fundings.tsx';
 import styles from '../features/money/components/money.module.css';
 import { AcceptedWork, Releases } from '../features/money/components/releases.tsx';
 import { SetAsideForm } from '../features/money/components/set-aside-form.tsx';
-import { StatementTable } from '../features/money/components/statement-table.tsx';
+import { StatementTable, StatementTotals } from '../features/money/components/statement-table.tsx';
 import { useCan } from '../features/session/hooks/use-session.ts';
 import { subcontractQuery, workKeys } from '../features/work/api/work.queries.ts';
 import { useLiveHints, useWatch } from '../lib/live.ts';
@@ -65,6 +65,9 @@ function SubcontractMoney({ subcontract }: { subcontract: SubcontractView }) {
   const waiting = subcontract.fundings.some(
     (funding) => funding.status === 'awaiting_payment' || funding.status === 'processing',
   );
+  const isUnderWay = waiting || subcontract.fundings.some((funding) => funding.status === 'requested');
+  const isGc = subcontract.side === 'gc';
+  const fundings = <Fundings fundings={subcontract.fundings} timeZone={subcontract.site.timeZone} />;
   return (
     <Page
       title={t('forWork', { number: subcontract.number })}
@@ -75,7 +78,7 @@ function SubcontractMoney({ subcontract }: { subcontract: SubcontractView }) {
       }
     >
       <div className={styles.stack}>
-        <div role="status">
+        <div role="status" className={styles.notice}>
           {(came === 'paid' || came === 'left') && waiting && (
             <Callout.Root>
               <Callout.Text>{t(`setAside.${came}`)}</Callout.Text>
@@ -85,16 +88,15 @@ function SubcontractMoney({ subcontract }: { subcontract: SubcontractView }) {
         <MoneyLine money={subcontract.money} />
         <div className={styles.columns}>
           <div className={styles.stack}>
-            <AcceptedWork
-              subcontract={subcontract}
-              canRelease={subcontract.side === 'gc' && can('money.release')}
-            />
-            {subcontract.side === 'gc' && (
-              <SetAsideForm subcontract={subcontract} canPay={can('money.set_aside')} />
-            )}
+            {isUnderWay && fundings}
+            <AcceptedWork subcontract={subcontract} canRelease={isGc && can('money.release')} />
+            {isGc && <SetAsideForm subcontract={subcontract} canPay={can('money.set_aside')} />}
             <Releases subcontract={subcontract} />
           </div>
-          <Fundings fundings={subcontract.fundings} timeZone={subcontract.site.timeZone} />
+          <div className={styles.stack}>
+            {can('money.read') && <OwnTotals subcontract={subcontract} />}
+            {!isUnderWay && fundings}
+          </div>
         </div>
         {can('money.read') && <OwnStatement subcontract={subcontract} />}
       </div>
@@ -102,10 +104,17 @@ function SubcontractMoney({ subcontract }: { subcontract: SubcontractView }) {
   );
 }
 
+/** The table below says so when the statement does not come. */
+function OwnTotals({ subcontract }: { subcontract: SubcontractView }) {
+  const statement = useQuery(statementQuery(subcontract.id)).data;
+  if (statement === undefined || statement.lines.length === 0) return null;
+  return <StatementTotals statement={statement} />;
+}
+
 function OwnStatement({ subcontract }: { subcontract: SubcontractView }) {
   const statement = useQuery(statementQuery(subcontract.id));
   if (statement.isError)
     return <QueryErrorState error={statement.error} onRetry={() => void statement.refetch()} />;
   if (statement.data === undefined) return <Loading />;
-  return <StatementTable statement={statement.data} timeZone={subcontract.site.timeZone} />;
+  return <StatementTable statement={statement.data} timeZone={subcontract.site.timeZone} ofOne />;
 }

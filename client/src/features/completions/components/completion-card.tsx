@@ -3,7 +3,7 @@ import type { SubcontractView } from '@kerfyard/common/subcontracts';
 import { Button, Text } from '@radix-ui/themes';
 import { useTranslation } from 'react-i18next';
 import { ConfirmDialog } from '../../../components/confirm-dialog.tsx';
-import { FileThumb } from '../../../components/file-thumb.tsx';
+import { FileThumbs } from '../../../components/file-thumb.tsx';
 import { MoneyText } from '../../../components/money-text.tsx';
 import { QueryErrorState } from '../../../components/states.tsx';
 import { StatusWord, type StatusTone } from '../../../components/status-word.tsx';
@@ -58,13 +58,7 @@ export function CompletionCard({
         </ul>
       )}
       {completion.note !== '' && <Text>{completion.note}</Text>}
-      {completion.photos.length > 0 && (
-        <div className={styles.photos}>
-          {completion.photos.map((photo) => (
-            <FileThumb key={photo.id} file={photo} />
-          ))}
-        </div>
-      )}
+      <FileThumbs files={completion.photos} />
       {completion.status === 'submitted' && <Submitted completion={completion} subcontract={subcontract} />}
       {completion.status === 'accepted' && <Accepted completion={completion} subcontract={subcontract} />}
     </article>

@@ -11,7 +11,7 @@ import { Button, Heading, Text } from '@radix-ui/themes';
 import { useEffect, useState } from 'react';
 import { useWatch, type Control } from 'react-hook-form';
 import { useTranslation } from 'react-i18next';
-import { FileThumb } from '../../../components/file-thumb.tsx';
+import { FileThumbs } from '../../../components/file-thumb.tsx';
 import { FileUploader } from '../../../components/file-uploader.tsx';
 import { CheckboxField, CheckboxGroupField } from '../../../components/form/choice-fields.tsx';
 import { TextField } from '../../../components/form/fields.tsx';
@@ -65,17 +65,10 @@ export function CompletionForm({ subcontract, visit }: { subcontract: Subcontrac
         label={t('form.photos')}
         onUploaded={(file) => setPhotos((before) => [...before, file])}
       />
-      {photos.length > 0 && (
-        <div className={styles.photos}>
-          {photos.map((file) => (
-            <FileThumb
-              key={file.id}
-              file={file}
-              onRemove={() => setPhotos((before) => before.filter((one) => one.id !== file.id))}
-            />
-          ))}
-        </div>
-      )}
+      <FileThumbs
+        files={photos}
+        onRemove={(file) => setPhotos((before) => before.filter((one) => one.id !== file.id))}
+      />
       <CheckboxGroupField
         control={form.control}
         name="sovLineIds"

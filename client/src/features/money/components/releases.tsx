@@ -99,7 +99,9 @@ export function Releases({ subcontract }: { subcontract: SubcontractView }) {
           <Amounts
             rows={[
               { label: t('releases.gross'), cents: release.grossCents },
-              { label: t('releases.retainage'), cents: -release.retainageCents },
+              ...(release.retainageCents > 0
+                ? [{ label: t('releases.retainage'), cents: -release.retainageCents }]
+                : []),
               { label: t('releases.fee'), cents: -release.feeCents },
               { label: t('releases.crew'), cents: release.crewCents, isTotal: true },
             ]}

@@ -24,6 +24,8 @@ export function SetAsideForm({ subcontract, canPay }: { subcontract: Subcontract
     setLeft(next);
   };
   const hint = hintFor(subcontract, free.length, canPay);
+  // The bar above says it.
+  if (hint === 'none') return null;
   return (
     <section className={styles.section} aria-labelledby="set-aside">
       <Heading as="h2" size="5" weight="medium" id="set-aside">

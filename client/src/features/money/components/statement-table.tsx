@@ -24,8 +24,34 @@ const example = {
   objectedCents: 0,
 };
 
-/** A statement: totals first, then every entry; both come from the same ledger rows. */
-export function StatementTable({ statement, timeZone }: { statement: StatementView; timeZone: string }) {
+interface StatementProps {
+  statement: StatementView;
+  timeZone: string;
+}
+
+/** The sums; they come from the same ledger rows as the entries. */
+export function StatementTotals({ statement }: { statement: StatementView }) {
+  const { t } = useTranslation('money');
+  return (
+    <section className={styles.section} aria-labelledby="totals">
+      <Heading as="h2" size="5" weight="medium" id="totals">
+        {t('totals.title')}
+      </Heading>
+      <Amounts
+        rows={totalsOf[statement.side].map((key) => ({
+          label: t(`totals.${statement.side}.${key}`),
+          cents: statement.totals[key],
+        }))}
+      />
+      <Text size="2" color="gray">
+        {t('totals.note')}
+      </Text>
+    </section>
+  );
+}
+
+/** Every entry. On one subcontract's page (`ofOne`) number and other side stand in its head already. */
+export function StatementTable({ statement, timeZone, ofOne = false }: StatementProps & { ofOne?: boolean }) {
   const { t } = useTranslation('money');
   if (statement.lines.length === 0) {
     return (
@@ -36,62 +62,66 @@ export function StatementTable({ statement, timeZone }: { statement: StatementVi
       />
     );
   }
-  const columns: Column<StatementLine>[] = [
-    {
-      key: 'at',
-      head: t('statement.at'),
-      cell: (line) => formatDateTime(line.at, timeZone),
-      csv: (line) => line.at,
-    },
-    {
-      key: 'kind',
-      head: t('statement.kind'),
-      cell: (line) => t(`statement.kinds.${line.kind}`),
-      csv: (line) => line.kind,
-    },
+  const kindOf = (line: StatementLine) => t(`statement.kinds.${statement.side}.${line.kind}`);
+  const when: Column<StatementLine> = {
+    key: 'at',
+    head: t('statement.at'),
+    cell: (line) => <span className={styles.when}>{formatDateTime(line.at, timeZone)}</span>,
+    csv: (line) => line.at,
+    narrow: 'hide',
+  };
+  const what: Column<StatementLine> = {
+    key: 'kind',
+    head: t('statement.kind'),
+    isRowHead: true,
+    cell: (line) => (
+      <>
+        {kindOf(line)}
+        <span className={styles.onPhone}>
+          {formatDateTime(line.at, timeZone)}
+          {!ofOne && (
+            <>
+              {' · '}
+              <TextLink to={paths.workMoney(line.subcontractId)}>{line.subcontractNumber}</TextLink>
+              {' · '}
+              {line.otherSide.name}
+            </>
+          )}
+        </span>
+      </>
+    ),
+    csv: kindOf,
+  };
+  const about: Column<StatementLine>[] = [
     {
       key: 'subcontract',
       head: t('statement.subcontract'),
       cell: (line) => <TextLink to={paths.workMoney(line.subcontractId)}>{line.subcontractNumber}</TextLink>,
       csv: (line) => line.subcontractNumber,
+      narrow: 'hide',
     },
     {
       key: 'other',
       head: t('statement.other'),
       cell: (line) => line.otherSide.name,
       csv: (line) => line.otherSide.name,
-    },
-    {
-      key: 'amount',
-      head: t('statement.amount'),
-      align: 'right',
-      cell: (line) => <MoneyText cents={line.cents} />,
-      csv: (line) => (line.cents / 100).toFixed(2),
+      narrow: 'hide',
     },
   ];
+  const amount: Column<StatementLine> = {
+    key: 'amount',
+    head: t('statement.amount'),
+    align: 'right',
+    cell: (line) => <MoneyText cents={line.cents} />,
+    csv: (line) => (line.cents / 100).toFixed(2),
+  };
   return (
-    <div className={styles.stack}>
-      <section className={styles.section} aria-labelledby="totals">
-        <Heading as="h2" size="5" weight="medium" id="totals">
-          {t('totals.title')}
-        </Heading>
-        <Amounts
-          rows={totalsOf[statement.side].map((key) => ({
-            label: t(`totals.${key}`),
-            cents: statement.totals[key],
-          }))}
-        />
-        <Text size="2" color="gray">
-          {t('totals.note')}
-        </Text>
-      </section>
-      <DataTable
-        caption={t('statement.caption')}
-        columns={columns}
-        rows={statement.lines}
-        rowKey={(line) => `${line.entryId}-${line.kind}`}
-        csvName="statement"
-      />
-    </div>
+    <DataTable
+      caption={t('statement.caption')}
+      columns={[when, what, ...(ofOne ? [] : about), amount]}
+      rows={statement.lines}
+      rowKey={(line) => `${line.entryId}-${line.kind}`}
+      csvName="statement"
+    />
   );
 }

@@ -1,5 +1,6 @@
 import { describeCut, takeoffCut, type CutTakeoff } from '@kerfyard/common/cutting';
 import type { CutLine } from '@kerfyard/common/scopes';
+import { Text } from '@radix-ui/themes';
 import { useMemo } from 'react';
 import { useTranslation } from 'react-i18next';
 import { DataTable, type Column } from '../../../components/data-table.tsx';
@@ -9,6 +10,12 @@ interface Row {
   line: CutLine;
   takeoff: CutTakeoff;
 }
+
+const quantities = [
+  { key: 'sawFt', unit: 'ft' },
+  { key: 'inchFeet', unit: 'in-ft' },
+  { key: 'coreInches', unit: 'in' },
+] as const;
 
 /** The cut list with each line's quantities, as the engine takes it off. */
 export function CutTable({ cuts }: { cuts: readonly CutLine[] }) {
@@ -36,13 +43,21 @@ export function CutTable({ cuts }: { cuts: readonly CutLine[] }) {
     {
       key: 'cut',
       head: t('cuts.cut'),
-      cell: ({ line }) =>
-        line.note === '' ? describeCut(line.cut) : `${describeCut(line.cut)} ${line.note}`,
+      cell: ({ line }) => (
+        <>
+          {describeCut(line.cut)}
+          {line.note !== '' && (
+            <Text as="div" size="1" color="gray">
+              {line.note}
+            </Text>
+          )}
+        </>
+      ),
       csv: ({ line }) => describeCut(line.cut),
     },
-    quantity('sawFt', 'ft'),
-    quantity('inchFeet', 'in-ft'),
-    quantity('coreInches', 'in'),
+    ...quantities
+      .filter(({ key }) => rows.some(({ takeoff }) => takeoff[key] > 0))
+      .map(({ key, unit }) => quantity(key, unit)),
   ];
   return (
     <DataTable

@@ -86,7 +86,7 @@ function Day({
   const { t } = useTranslation('visits');
   const blocks = blocksOf(day, visits);
   return (
-    <div className={`${styles.day} ${isToday ? styles.today : ''}`}>
+    <div className={`${styles.day} ${isToday ? styles.today : ''} ${blocks.length === 0 ? styles.free : ''}`}>
       <Heading as="h3" size="2" weight="medium">
         {formatDay(day.startsAt, zone)}
       </Heading>
