@@ -52,7 +52,7 @@ export function ConfirmDialog(props: ConfirmDialogProps) {
     <AlertDialog.Root open={open} onOpenChange={change}>
       <AlertDialog.Trigger>{props.trigger}</AlertDialog.Trigger>
       <AlertDialog.Content maxWidth="30rem">
-        <AlertDialog.Title>{props.title}</AlertDialog.Title>
+        <AlertDialog.Title as="h2">{props.title}</AlertDialog.Title>
         <AlertDialog.Description size="3" mb="3">
           {props.text}
         </AlertDialog.Description>

@@ -32,7 +32,7 @@ export default function SignInAgainDialog() {
   return (
     <Dialog.Root open onOpenChange={(open) => !open && sessionGate.answer(false)}>
       <Dialog.Content maxWidth="26rem" onOpenAutoFocus={focusPassword}>
-        <Dialog.Title>{t('signInAgain.title')}</Dialog.Title>
+        <Dialog.Title as="h2">{t('signInAgain.title')}</Dialog.Title>
         <Dialog.Description size="2" color="gray" mb="4">
           {t('signInAgain.text')}
         </Dialog.Description>
