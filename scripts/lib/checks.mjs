@@ -37,6 +37,7 @@ const allChecks = {
   format: { command: 'prettier', args: ['--check', '.', '--log-level', 'warn'] },
   lint: { command: 'eslint', args: ['.', '--cache', '--cache-location', '.tmp/eslintcache'] },
   types: { command: 'tsc', args: ['-b'] },
+  size: { command: 'node', args: ['client/scripts/size-check.mjs'] },
   scripts: {
     command: 'node',
     args: [
