@@ -16,7 +16,7 @@ export const routes: readonly FeatureRoute[] = [
   {
     path: '/scopes/:scopeId',
     audience: 'general_contractor',
-    words: ['scopes', 'scope'],
+    words: ['scopes', 'scope', 'talk'],
     page: () => import('./scope-page.tsx'),
   },
   {

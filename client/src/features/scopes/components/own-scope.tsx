@@ -7,6 +7,7 @@ import { Page } from '../../../components/page.tsx';
 import { formatDateTime } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
 import { useCan } from '../../session/hooks/use-session.ts';
+import { ScopeThreads } from '../../talk/components/scope-threads.tsx';
 import { EndScope } from './end-scope.tsx';
 import styles from './own-scope.module.css';
 import { ScopeBody } from './scope-body.tsx';
@@ -30,6 +31,7 @@ export function OwnScope({ scope, onDue }: { scope: ScopeDetailView; onDue: () =
         <ScopeBody scope={scope} body={body} />
         <aside className={styles.aside}>
           <BidsPanel scope={scope} body={body} onDue={onDue} />
+          <ScopeThreads scopeId={scope.id} />
         </aside>
       </div>
     </Page>

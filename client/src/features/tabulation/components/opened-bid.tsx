@@ -1,4 +1,4 @@
-import type { OpenedBidView } from '@kerfyard/common/bids';
+import type { BidUnit, OpenedBidView } from '@kerfyard/common/bids';
 import { describeCut } from '@kerfyard/common/cutting';
 import type { CutLine } from '@kerfyard/common/scopes';
 import { Text } from '@radix-ui/themes';
@@ -6,7 +6,6 @@ import { useTranslation } from 'react-i18next';
 import { DataTable } from '../../../components/data-table.tsx';
 import { MoneyText } from '../../../components/money-text.tsx';
 import { formatDateTime, formatMoney, formatNumber, formatRate } from '../../../lib/format.ts';
-import { PriceSummary } from '../../bids/components/price-summary.tsx';
 import styles from './tabulation.module.css';
 
 interface OpenedBidProps {
@@ -31,7 +30,12 @@ export function OpenedBid({ bid, cuts, timeZone }: OpenedBidProps) {
         ) : (
           <PricedLines bid={bid} cuts={cuts} />
         )}
-        <PriceSummary priced={priced} />
+        <PriceFacts priced={priced} />
+        {priced.minimumApplied && (
+          <Text as="p" size="2">
+            {t('price.minimumApplied')}
+          </Text>
+        )}
         <dl className={styles.facts}>
           <dt>{t('bid.inclusions')}</dt>
           <dd>
@@ -93,7 +97,7 @@ function PricedLines({ bid, cuts }: { bid: OpenedBidView; cuts: readonly CutLine
           key: 'quantity',
           head: t('bid.quantity'),
           align: 'right',
-          cell: (line) => `${formatNumber(line.quantity / 100, 2)} ${t(`bid:units.${line.unit}`)}`.trim(),
+          cell: (line) => `${formatNumber(line.quantity / 100, 2)} ${unitWords(line.unit, t)}`.trim(),
           csv: (line) => line.quantity / 100,
         },
         {
@@ -112,6 +116,31 @@ function PricedLines({ bid, cuts }: { bid: OpenedBidView; cuts: readonly CutLine
         },
       ]}
     />
+  );
+}
+
+/** Pieces and lump sums are counted, not measured. */
+function unitWords(unit: BidUnit, t: (key: string) => string): string {
+  return unit === 'each' || unit === 'lump' ? '' : t(`bid:units.${unit}`);
+}
+
+/** What a price by lines comes to: the sum, mobilization, the minimum of the trip, the price. */
+function PriceFacts({ priced }: { priced: OpenedBidView['priced'] }) {
+  const { t } = useTranslation('tabulation');
+  const rows = (['computed', 'mobilization', 'minimum', 'total'] as const)
+    .map((name) => ({ name, cents: priced[`${name}Cents`] }))
+    .filter(({ name, cents }) => name === 'total' || (cents > 0 && priced.lines.length > 0));
+  return (
+    <dl className={styles.price}>
+      {rows.map(({ name, cents }) => (
+        <div key={name} className={name === 'total' ? styles.priceTotal : undefined}>
+          <dt>{t(`price.${name}`)}</dt>
+          <dd>
+            <MoneyText cents={cents} weight={name === 'total' ? 'strong' : 'normal'} />
+          </dd>
+        </div>
+      ))}
+    </dl>
   );
 }
 

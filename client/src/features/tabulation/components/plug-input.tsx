@@ -47,7 +47,7 @@ export function PlugInput({ label, cents, disabled, onSave }: PlugInputProps) {
         : t(state.kind === 'saving' ? 'table.saving' : 'table.saved');
   return (
     <span className={styles.plug}>
-      <span className={formStyles.withUnit}>
+      <span className={formStyles.withUnit} style={{ ['--unit-room' as string]: '0px' }}>
         <span className={formStyles.before} aria-hidden="true">
           $
         </span>

@@ -95,14 +95,14 @@ function BidMarks(props: { compared: ComparedBid; top: number; x: (cents: number
         {formatMoney(row.adjustedCents)}
       </text>
       <line x1={x(row.baseCents)} x2={x(row.adjustedCents)} y1={y} y2={y} className={styles.leftOut} />
-      <circle cx={x(row.baseCents)} cy={y} r="6" className={styles.base} />
+      <circle cx={x(row.baseCents)} cy={y} r="7" className={styles.base} />
       {/* Centred on its place: a rectangle's x is its left edge and takes no percent and pixels together. */}
       <rect
         x={x(row.adjustedCents)}
-        y={y - 5}
-        width="10"
-        height="10"
-        transform="translate(-5 0)"
+        y={y - 4.5}
+        width="9"
+        height="9"
+        transform="translate(-4.5 0)"
         className={styles.adjusted}
       />
     </g>

@@ -31,6 +31,7 @@ export function CutDetails(props: CutDetailsProps) {
       {isPanel && <Blade {...props} />}
       {kind === 'opening' && <Corners {...props} />}
       {isPanel && <Removal {...props} />}
+      {kind === 'stitch' && <ClosedLoop {...props} />}
       <Note {...props} />
     </div>
   );
@@ -277,6 +278,22 @@ function Pieces({ line }: { line: DraftCut }): ReactNode {
       />
       <span className={styles.caution}>{t('cuts.pieceCaution')}</span>
     </Text>
+  );
+}
+
+function ClosedLoop({ line, change }: CutDetailsProps) {
+  const { t } = useTranslation('scopes');
+  return (
+    <label className={styles.tick}>
+      <input
+        type="checkbox"
+        checked={line.cut.closed === true}
+        onChange={(event) =>
+          change({ type: 'figure', id: line.id, field: 'closed', value: event.target.checked })
+        }
+      />
+      {t('cuts.closed')}
+    </label>
   );
 }
 

@@ -1,13 +1,16 @@
 import { cutKinds, MAX_CUT_LINES } from '@kerfyard/common/scopes';
-import { Button, Text } from '@radix-ui/themes';
+import { Button, DropdownMenu, Text } from '@radix-ui/themes';
 import { memo, useCallback, useEffect, useRef, type KeyboardEvent } from 'react';
 import { useTranslation } from 'react-i18next';
 import { useAnnounce } from '../../../../components/announcer.tsx';
 import { FieldNotes } from '../../../../components/form/field-frame.tsx';
-import type { DraftCut } from '../../cut-lines.ts';
+import type { DraftCut, DraftKind } from '../../cut-lines.ts';
 import styles from './cut-list.module.css';
 import { CutRow, type CutErrors } from './cut-row.tsx';
 import { isFull, type CutListChange } from './use-cut-list.ts';
+
+/** From here on lines out of sight are not laid out. */
+const LONG = 40;
 
 interface CutListEditorProps {
   lines: readonly DraftCut[];
@@ -46,7 +49,12 @@ export const CutListEditor = memo(function CutListEditor(props: CutListEditorPro
   return (
     <div className={styles.editor}>
       {lines.length > 0 && (
-        <ol className={styles.rows} ref={list} onKeyDown={onKeyDown} aria-label={t('cuts.title')}>
+        <ol
+          className={`${styles.rows} ${lines.length > LONG ? styles.long : ''}`}
+          ref={list}
+          onKeyDown={onKeyDown}
+          aria-label={t('cuts.title')}
+        >
           {lines.map((line, index) => (
             <CutRow
               key={line.id}
@@ -59,28 +67,68 @@ export const CutListEditor = memo(function CutListEditor(props: CutListEditorPro
         </ol>
       )}
       <FieldNotes id="cuts" hint={undefined} error={error} />
-      <div className={styles.add} role="group" aria-label={t('cuts.addGroup')}>
-        {cutKinds.map((kind, index) => (
-          <Button
-            key={kind}
-            type="button"
-            variant="soft"
-            size="3"
-            // The summary leads here when the list is empty.
-            {...(index === 0 ? { name: 'cuts' } : {})}
-            disabled={isFull(lines)}
-            onClick={() => changeAndFollow({ type: 'add', kind })}
-          >
-            {t(`cuts.add.${kind}`)}
-          </Button>
-        ))}
-      </div>
+      <AddButtons isFull={isFull(lines)} onAdd={(kind) => changeAndFollow({ type: 'add', kind })} />
       <Text as="p" size="1" color="gray">
         {isFull(lines) ? t('cuts.full', { count: MAX_CUT_LINES }) : t('cuts.keys')}
       </Text>
     </div>
   );
 });
+
+/** The kinds most scopes are made of; the others are one press further. */
+const usualKinds = ['line', 'trench', 'opening', 'core'] as const satisfies readonly DraftKind[];
+const otherKinds = cutKinds.filter((kind) => !usualKinds.some((usual) => usual === kind));
+
+function AddButtons(props: { isFull: boolean; onAdd: (kind: DraftKind) => void }) {
+  const { t } = useTranslation('scopes');
+  // The menu gives the focus back to its button; the new line asks for it afterwards.
+  const chosen = useRef<DraftKind | null>(null);
+  return (
+    <div className={styles.add} role="group" aria-label={t('cuts.addGroup')}>
+      {usualKinds.map((kind, index) => (
+        <Button
+          key={kind}
+          type="button"
+          variant="soft"
+          size="3"
+          // The summary leads here when the list is empty.
+          {...(index === 0 ? { name: 'cuts' } : {})}
+          disabled={props.isFull}
+          onClick={() => props.onAdd(kind)}
+        >
+          {t(`cuts.add.${kind}`)}
+        </Button>
+      ))}
+      <DropdownMenu.Root>
+        <DropdownMenu.Trigger>
+          <Button type="button" variant="soft" color="gray" size="3" disabled={props.isFull}>
+            {t('cuts.addMore')}
+            <DropdownMenu.TriggerIcon />
+          </Button>
+        </DropdownMenu.Trigger>
+        <DropdownMenu.Content
+          onCloseAutoFocus={(event) => {
+            if (chosen.current === null) return;
+            event.preventDefault();
+            props.onAdd(chosen.current);
+            chosen.current = null;
+          }}
+        >
+          {otherKinds.map((kind) => (
+            <DropdownMenu.Item
+              key={kind}
+              onSelect={() => {
+                chosen.current = kind;
+              }}
+            >
+              {t(`cuts.kinds.${kind}`)}
+            </DropdownMenu.Item>
+          ))}
+        </DropdownMenu.Content>
+      </DropdownMenu.Root>
+    </div>
+  );
+}
 
 /** The same column of the next or previous line that has it. */
 function neighbour(row: HTMLElement, column: string, key: string): HTMLInputElement | null {

@@ -39,7 +39,11 @@ export const ResponsibilityFields = memo(function ResponsibilityFields(props: Re
     <>
       <div className={styles.sentence}>
         <Text as="p" size="4" weight="medium">
-          {t('sheet.sentence', { gc: counts.gc, crew: counts.crew, other: counts.other })}
+          {t(counts.other === 0 ? 'sheet.sentence' : 'sheet.sentenceOther', {
+            gc: counts.gc,
+            crew: counts.crew,
+            other: counts.other,
+          })}
         </Text>
         <Button
           type="button"

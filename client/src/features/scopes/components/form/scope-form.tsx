@@ -1,8 +1,8 @@
 import type { ScopeDetailView } from '@kerfyard/common/scopes';
 import { Button, Callout, Flex } from '@radix-ui/themes';
 import { useQueryClient } from '@tanstack/react-query';
-import { useCallback, useDeferredValue, useMemo, useState } from 'react';
-import { FormProvider, useForm, useWatch } from 'react-hook-form';
+import { useCallback, useDeferredValue, useEffect, useMemo, useRef, useState } from 'react';
+import { FormProvider, useForm, useFormContext, useWatch } from 'react-hook-form';
 import { useTranslation } from 'react-i18next';
 import { useAnnounce } from '../../../../components/announcer.tsx';
 import { FormLabels } from '../../../../components/form/form-labels.ts';
@@ -14,9 +14,11 @@ import { dropTail } from '../../../../lib/draft-tail.ts';
 import { useCan } from '../../../session/hooks/use-session.ts';
 import { usePublish } from '../../api/scope.mutations.ts';
 import { scopeKeys, scopeQuery } from '../../api/scope.queries.ts';
+import type { DraftCut } from '../../cut-lines.ts';
 import { tailKey } from '../../draft-saver.ts';
 import { useDraftIssues } from '../../hooks/use-draft-issues.ts';
 import { keptTail, useSavedDraft } from '../../hooks/use-saved-draft.ts';
+import type { SortedIssues } from '../../issues.ts';
 import { fromDraft, toDraft, type ScopeFormValues } from '../../scope-form-values.ts';
 import { BiddingFields } from './bidding-fields.tsx';
 import { ConditionFields } from './condition-fields.tsx';
@@ -30,7 +32,7 @@ import styles from './scope-form.module.css';
 import { FormSection } from './section.tsx';
 import { SiteFields } from './site-fields.tsx';
 import { TermFields } from './term-fields.tsx';
-import { useCutList } from './use-cut-list.ts';
+import { useCutList, type CutListChange } from './use-cut-list.ts';
 import { useSummaryLines } from './use-summary-lines.ts';
 
 export type DraftScope = ScopeDetailView & { draft: NonNullable<ScopeDetailView['draft']> };
@@ -51,6 +53,8 @@ export function ScopeForm({ scope, onReload }: { scope: DraftScope; onReload: ()
   const { shown, isWhole, reveal, fromServer } = useDraftIssues(form, settled);
   const labels = useLabels();
   const summary = useSummaryLines(shown.all, labels.texts, lines);
+  const [reveals, setReveals] = useState(0);
+  const summaryBox = useSummaryFocus(reveals);
   const publish = usePublishing(scope.id, () => saver.flush(), fromServer);
   return (
     <FormProvider {...form}>
@@ -61,7 +65,9 @@ export function ScopeForm({ scope, onReload }: { scope: DraftScope; onReload: ()
           aria-label={t('form.label')}
           onSubmit={(event) => event.preventDefault()}
         >
-          <FormSummary what={undefined} next={undefined} lines={summary} onChoose={focusField} />
+          <div ref={summaryBox}>
+            <FormSummary what={undefined} next={undefined} lines={summary} onChoose={focusField} />
+          </div>
           {state.kind === 'conflict' && (
             <Conflict
               scopeId={scope.id}
@@ -69,42 +75,7 @@ export function ScopeForm({ scope, onReload }: { scope: DraftScope; onReload: ()
               onReload={onReload}
             />
           )}
-          <FormSection title={t('form.what')}>
-            <TextField control={form.control} name="title" label={t('form.title')} maxLength={140} />
-            <TextField
-              control={form.control}
-              name="summary"
-              label={t('form.summary')}
-              hint={t('form.summaryHint')}
-              optional
-              lines={3}
-              maxLength={2000}
-            />
-          </FormSection>
-          <FormSection title={t('site.title')}>
-            <SiteFields />
-          </FormSection>
-          <FormSection title={t('cuts.title')} lead={t('cuts.lead')}>
-            <div className={listStyles.grid}>
-              <CutListEditor lines={lines} change={change} errors={shown.cuts} error={shown.cutList} />
-              <CutQuantities lines={settledLines} />
-            </div>
-          </FormSection>
-          <FormSection title={t('conditions.title')}>
-            <ConditionFields lines={settledLines} />
-          </FormSection>
-          <FormSection title={t('files.title')} lead={t('files.lead')}>
-            <ScopeFiles scopeId={scope.id} files={scope.files} />
-          </FormSection>
-          <FormSection title={t('sheet.title')} lead={t('sheet.lead')}>
-            <ResponsibilityFields lines={settledLines} errors={shown.sheet} />
-          </FormSection>
-          <FormSection title={t('terms.title')}>
-            <TermFields />
-          </FormSection>
-          <FormSection title={t('bidding.title')}>
-            <BiddingFields />
-          </FormSection>
+          <Sections scope={scope} lines={lines} settledLines={settledLines} change={change} shown={shown} />
           <PublishBar
             state={state}
             isWhole={isWhole}
@@ -116,13 +87,67 @@ export function ScopeForm({ scope, onReload }: { scope: DraftScope; onReload: ()
             }}
             onReveal={() => {
               reveal();
-              window.scrollTo({ top: 0 });
+              setReveals((count) => count + 1);
             }}
             onPublish={publish}
           />
         </form>
       </FormLabels>
     </FormProvider>
+  );
+}
+
+/** Everything a scope says, in the order a crew reads it. */
+function Sections(props: {
+  scope: DraftScope;
+  lines: readonly DraftCut[];
+  /** The lines a moment later: what is only shown must not hold up the typing. */
+  settledLines: readonly DraftCut[];
+  change: (change: CutListChange) => void;
+  shown: SortedIssues;
+}) {
+  const { scope, lines, settledLines, change, shown } = props;
+  const { t } = useTranslation('scopes');
+  const { control } = useFormContext<ScopeFormValues>();
+  return (
+    <>
+      <FormSection title={t('form.what')}>
+        <TextField control={control} name="title" label={t('form.title')} maxLength={140} />
+        <TextField
+          control={control}
+          name="summary"
+          label={t('form.summary')}
+          hint={t('form.summaryHint')}
+          optional
+          lines={3}
+          maxLength={2000}
+        />
+      </FormSection>
+      <FormSection title={t('site.title')}>
+        <SiteFields />
+      </FormSection>
+      <FormSection title={t('cuts.title')} lead={t('cuts.lead')}>
+        <div className={listStyles.grid}>
+          <CutListEditor lines={lines} change={change} errors={shown.cuts} error={shown.cutList} />
+          <CutQuantities lines={settledLines} />
+        </div>
+      </FormSection>
+      <FormSection title={t('conditions.title')}>
+        <ConditionFields lines={settledLines} />
+      </FormSection>
+      <FormSection title={t('files.title')} lead={t('files.lead')}>
+        <ScopeFiles scopeId={scope.id} files={scope.files} />
+      </FormSection>
+      <FormSection title={t('sheet.title')} lead={t('sheet.lead')}>
+        <ResponsibilityFields lines={settledLines} errors={shown.sheet} />
+      </FormSection>
+      <FormSection title={t('terms.title')}>
+        <TermFields />
+      </FormSection>
+      <FormSection title={t('bidding.title')}>
+        <BiddingFields />
+      </FormSection>
+    </>
   );
 }
 
@@ -184,6 +209,17 @@ function Conflict(props: {
       </Flex>
     </Callout.Root>
   );
+}
+
+/** Pressing Publish on a draft that is not whole leads to the list of what is missing. */
+function useSummaryFocus(reveals: number) {
+  const box = useRef<HTMLDivElement>(null);
+  useEffect(() => {
+    if (reveals === 0) return;
+    box.current?.scrollIntoView({ block: 'center' });
+    box.current?.querySelector<HTMLElement>('button')?.focus({ preventScroll: true });
+  }, [reveals]);
+  return box;
 }
 
 function useLabels() {
