@@ -23,3 +23,25 @@ export function downloadCsv(name: string, text: string): void {
   link.click();
   setTimeout(() => URL.revokeObjectURL(url), 1000);
 }
+
+/**
+ * Cells of a CSV text (RFC 4180: quotes, doubled quotes, line ends of either kind), without its byte-order mark and
+ * without empty lines; null when it has more than `maxRows` rows, found out before any more is read.
+ */
+export function parseCsv(text: string, maxRows: number): string[][] | null {
+  const rows: string[][] = [];
+  let row: string[] = [];
+  // A cell is quoted, or runs to the next comma or line end; what stands between is read in one piece.
+  const cells = /(?:"((?:[^"]|"")*)"|([^,\r\n]*))(,|\r\n|\n|\r|$)/gy;
+  cells.lastIndex = text.startsWith('\ufeff') ? 1 : 0;
+  for (let match = cells.exec(text); match !== null; match = cells.exec(text)) {
+    const [, quoted, plain = '', end] = match;
+    row.push((quoted === undefined ? plain : quoted.replaceAll('""', '"')).trim());
+    if (end === ',') continue;
+    if (row.some((value) => value !== '')) rows.push(row);
+    if (rows.length > maxRows) return null;
+    row = [];
+    if (cells.lastIndex >= text.length) break;
+  }
+  return rows;
+}

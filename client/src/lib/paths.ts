@@ -6,6 +6,7 @@ export const paths = {
   signUp: (kind?: CompanyKind) => (kind === undefined ? '/sign-up' : `/sign-up?as=${asParameter[kind]}`),
   signIn: (next?: string) => (next === undefined ? '/sign-in' : `/sign-in?next=${encodeURIComponent(next)}`),
   company: '/company',
+  rateCard: '/company/rate-card',
   calculators: '/calculators',
   calculator: (name: string) => `/calculators/${name}`,
   scopes: '/scopes',

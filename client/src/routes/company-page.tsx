@@ -9,6 +9,7 @@ import { CompanyForm } from '../features/company/components/company-form.tsx';
 import styles from '../features/company/components/company.module.css';
 import { Ladder } from '../features/company/components/ladder.tsx';
 import { Payouts } from '../features/company/components/payouts.tsx';
+import { RateCardLink } from '../features/company/components/rate-card-link.tsx';
 import { Units } from '../features/company/components/units.tsx';
 import { useCan } from '../features/session/hooks/use-session.ts';
 import { queryClient } from '../lib/query-client.ts';
@@ -50,6 +51,7 @@ export default function CompanyPage() {
         <div className={styles.column}>
           <Ladder company={own} />
           {isCrew && <Payouts payouts={own.payouts} canStart={can('money.payout')} />}
+          {isCrew && can('bid.read') && <RateCardLink />}
           {isCrew && <Units kind="crews" units={own.crews} canEdit={canEdit} />}
           {isCrew && <Units kind="trucks" units={own.trucks} canEdit={canEdit} />}
         </div>

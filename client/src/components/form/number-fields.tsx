@@ -35,6 +35,24 @@ export function showCents(value: unknown): string {
   return cents === 0 ? dollars : `${dollars}.${String(cents).padStart(2, '0')}`;
 }
 
+/** `0.0425` dollars → 425 hundredths of a cent, for rates that have parts of a cent. */
+export function readRate(text: string): Typed {
+  const plain = text.replace(/[$,\s]/g, '');
+  if (plain === '') return null;
+  const match = /^(\d*)(?:\.(\d{0,4}))?$/.exec(plain);
+  if (match === null || plain === '.') return text;
+  return Number(match[1] ?? 0) * 10_000 + Number((match[2] ?? '').padEnd(4, '0'));
+}
+
+/** Hundredths of a cent as dollars for an input: at least two decimals when there are any, parts of a cent as needed. */
+export function showRate(value: unknown): string {
+  if (typeof value !== 'number') return showNumber(value);
+  const parts = String(value % 10_000).padStart(4, '0');
+  const dollars = String(Math.floor(value / 10_000)).replace(/\B(?=(\d{3})+$)/g, ',');
+  if (parts === '0000') return dollars;
+  return `${dollars}.${parts.endsWith('00') ? parts.slice(0, 2) : parts.replace(/0$/, '')}`;
+}
+
 interface Reading {
   read: (text: string) => Typed;
   show: (value: unknown) => string;
@@ -136,12 +154,27 @@ export function NumberField<Input extends FieldValues, Output>(
 }
 
 /** Dollars typed, whole cents kept. */
-export function MoneyField<Input extends FieldValues, Output>(
-  props: Bound<Input, Output> & FieldWords & { disabled?: boolean },
+export function MoneyField<Input extends FieldValues, Output>(props: DollarFieldProps<Input, Output>) {
+  return <DollarField {...props} reading={centsReading} />;
+}
+
+/** Dollars typed, parts of a cent too; hundredths of a cent kept. */
+export function RateField<Input extends FieldValues, Output>(props: DollarFieldProps<Input, Output>) {
+  return <DollarField {...props} reading={rateReading} />;
+}
+
+type DollarFieldProps<Input extends FieldValues, Output> = Bound<Input, Output> &
+  FieldWords & { disabled?: boolean };
+
+const centsReading: Reading = { read: readCents, show: showCents };
+const rateReading: Reading = { read: readRate, show: showRate };
+
+function DollarField<Input extends FieldValues, Output>(
+  props: DollarFieldProps<Input, Output> & { reading: Reading },
 ) {
-  const { control, name, label, hint, optional, disabled = false } = props;
+  const { control, name, label, hint, optional, disabled = false, reading } = props;
   const { field, fieldState } = useController({ control, name });
-  const typed = useTypedText(field.value, field.onChange, { read: readCents, show: showCents });
+  const typed = useTypedText(field.value, field.onChange, reading);
   return (
     <FieldFrame
       name={name}
