@@ -2,7 +2,7 @@ import type { MeView } from '@kerfyard/common/people';
 import { useEffect } from 'react';
 import { useTranslation } from 'react-i18next';
 import { redirect, useNavigate } from 'react-router-dom';
-import { ButtonLink } from '../components/link.tsx';
+import { ButtonLink, TextLink } from '../components/link.tsx';
 import { demoPeopleQuery } from '../features/first-look/api/demo.queries.ts';
 import { DemoDoors } from '../features/first-look/components/demo-doors.tsx';
 import { ExamplePanel } from '../features/first-look/components/example-panel.tsx';
@@ -54,6 +54,9 @@ export default function FirstLookPage() {
           </ButtonLink>
         </div>
         <DemoDoors onSignedIn={enter} />
+        <p className={styles.calculators}>
+          <TextLink to={paths.calculators}>{t('calculators')}</TextLink>
+        </p>
       </div>
       <ExamplePanel />
       <p className={styles.foot}>{t('caution')}</p>

@@ -1,5 +1,5 @@
 export { CuttingInputError } from './input-error.ts';
-export { describeRange, type NumberRange } from './check.ts';
+export { checkNumber, describeRange, type NumberRange } from './check.ts';
 export * from './types.ts';
 export * from './limits.ts';
 export type { Certainty, NumberOrigin, WorkingInput, WorkingSource, WorkingStep } from './working.ts';

@@ -1,7 +1,9 @@
 import type { MeView } from '@kerfyard/common/people';
 import { DropdownMenu } from '@radix-ui/themes';
 import { useTranslation } from 'react-i18next';
+import { useNavigate } from 'react-router-dom';
 import { changeLocale, chosenLocale, locales } from '../../../lib/i18n.ts';
+import { paths } from '../../../lib/paths.ts';
 import { themeChoices, useTheme } from '../../../lib/theme.ts';
 import { useSignOut } from '../hooks/use-session.ts';
 import { AccountButton } from './account-button.tsx';
@@ -11,6 +13,7 @@ export default function AccountMenuOpened({ me }: { me: MeView }) {
   const { t } = useTranslation();
   const [theme, chooseTheme] = useTheme();
   const signOut = useSignOut();
+  const navigate = useNavigate();
   return (
     <DropdownMenu.Root defaultOpen modal={false}>
       <DropdownMenu.Trigger>
@@ -38,6 +41,10 @@ export default function AccountMenuOpened({ me }: { me: MeView }) {
             </DropdownMenu.RadioItem>
           ))}
         </DropdownMenu.RadioGroup>
+        <DropdownMenu.Separator />
+        <DropdownMenu.Item onSelect={() => void navigate(paths.calculators)}>
+          {t('calculators')}
+        </DropdownMenu.Item>
         <DropdownMenu.Separator />
         <DropdownMenu.Item onSelect={() => signOut.mutate()}>{t('signOut')}</DropdownMenu.Item>
       </DropdownMenu.Content>

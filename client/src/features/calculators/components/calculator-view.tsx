@@ -1,0 +1,98 @@
+import { Button, Heading, Text } from '@radix-ui/themes';
+import { useMemo, useState, type ReactNode } from 'react';
+import { useTranslation } from 'react-i18next';
+import { useAnnounce } from '../../../components/announcer.tsx';
+import type { Calculator } from '../calculator.ts';
+import { evaluate } from '../evaluate.ts';
+import { useInputsInAddress } from '../hooks/use-inputs-in-address.ts';
+import { CalculatorForm } from './calculator-form.tsx';
+import { Cautions, Sources } from './calculator-notes.tsx';
+import { CalculatorResults } from './calculator-results.tsx';
+import styles from './calculators.module.css';
+
+/** One calculator: its fields, and beside them the drawing, the results with their working, sources and cautions. */
+export function CalculatorView({ calculator }: { calculator: Calculator }) {
+  const { t } = useTranslation('calculators');
+  const inputs = useInputsInAddress(calculator.fields);
+  const evaluated = useMemo(() => evaluate(calculator, inputs.raw), [calculator, inputs.raw]);
+  const { result, values, problems, refused } = evaluated;
+  return (
+    <div className={styles.view}>
+      <div className={styles.inputs}>
+        <CalculatorForm calculator={calculator} inputs={inputs} problems={problems} />
+        <div className={styles.actions}>
+          <SendButton address={inputs.address} />
+          {inputs.isChanged && (
+            <Button type="button" variant="soft" color="gray" onClick={inputs.reset}>
+              {t('reset')}
+            </Button>
+          )}
+        </div>
+      </div>
+      <section className={styles.found} aria-labelledby="found">
+        <Heading as="h2" size="4" weight="medium" id="found">
+          {t('found')}
+        </Heading>
+        {result === null ? (
+          <NothingFound count={Object.keys(problems).length} refused={refused} />
+        ) : (
+          <>
+            <Drawing>{calculator.draw?.(values as never)}</Drawing>
+            <CalculatorResults name={calculator.name} result={result} />
+          </>
+        )}
+        <Cautions calculator={calculator} result={result} />
+        {result !== null && <Sources result={result} />}
+      </section>
+    </div>
+  );
+}
+
+function Drawing({ children }: { children: ReactNode }) {
+  return children === undefined ? null : <div className={styles.drawing}>{children}</div>;
+}
+
+/** No number is better than a wrong one: which field keeps it from counting stands beside that field. */
+function NothingFound({ count, refused }: { count: number; refused: string | null }) {
+  const { t } = useTranslation('calculators');
+  return (
+    <div className={styles.nothing} role="status">
+      <Text as="p" weight="medium">
+        {refused === null ? t('nothing', { count }) : t('refused')}
+      </Text>
+      <Text as="p" size="2" color="gray">
+        {refused ?? t('nothingNext')}
+      </Text>
+    </div>
+  );
+}
+
+/** Copies the address, inputs and all. Where the browser does not let it, the address bar holds the same. */
+function SendButton({ address }: { address: () => string }) {
+  const { t } = useTranslation('calculators');
+  const announce = useAnnounce();
+  const [said, setSaid] = useState('');
+  const say = (words: string) => {
+    announce(words);
+    setSaid(words);
+  };
+  const copy = () => {
+    const refused = () => say(t('copyRefused'));
+    // Pages that do not come over HTTPS have no clipboard.
+    const clipboard = navigator.clipboard as Clipboard | undefined;
+    if (clipboard === undefined) return refused();
+    clipboard.writeText(address()).then(() => say(t('copied')), refused);
+  };
+  return (
+    <>
+      <Button type="button" variant="soft" onClick={copy}>
+        {t('copy')}
+      </Button>
+      {said !== '' && (
+        <span className={styles.said} aria-hidden="true">
+          {said}
+        </span>
+      )}
+    </>
+  );
+}
