@@ -83,7 +83,7 @@ export class Operations implements OnApplicationBootstrap {
     const handler = this.handlers.get(operation.kind);
     if (handler === undefined) throw new Error(`no handler for operation ${operation.kind}`);
     try {
-      const result = await this.effect(handler, operation, row.key_may_be_gone);
+      const result = await this.effect(handler, operation, row);
       await this.settle(operation, handler, { result });
     } catch (error) {
       await this.fail(operation, handler, error);
@@ -93,7 +93,7 @@ export class Operations implements OnApplicationBootstrap {
   private async effect(
     handler: OperationHandler<{ id: string }>,
     operation: Operation,
-    keyMayBeGone: boolean,
+    { key_may_be_gone: keyMayBeGone, attempts }: OperationRow,
   ): Promise<{ id: string }> {
     if (keyMayBeGone) {
       const found = await handler.find(this.stripe, operation);
@@ -107,7 +107,15 @@ export class Operations implements OnApplicationBootstrap {
         ),
       );
     }
-    return handler.call(this.stripe, operation);
+    try {
+      return await handler.call(this.stripe, operation);
+    } catch (error) {
+      // A server error is answered again and again under the same key, though its effect may be there.
+      const mayBeThere = attempts > 1 && readStripeError(error).outcome === 'unknown';
+      const found = mayBeThere ? await handler.find(this.stripe, operation) : null;
+      if (found === null) throw error;
+      return found;
+    }
   }
 
   private async fail(
@@ -151,6 +159,7 @@ interface OperationRow {
   subject_type: string;
   subject_id: string;
   params: Record<string, unknown>;
+  attempts: number;
   key_may_be_gone: boolean;
 }
 

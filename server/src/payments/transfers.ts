@@ -55,7 +55,7 @@ export class Transfers implements OnModuleInit {
   onModuleInit(): void {
     this.operations.register<{ id: string }>('transfer', {
       call: (stripe, operation) => this.createTransfer(stripe, operation),
-      find: (stripe, operation) => findTransfer(stripe, operation),
+      find: (stripe, operation) => this.findTransfer(stripe, operation),
       succeed: (tx, operation, transfer) => this.record(tx, operation, transfer.id),
       refuse: async (tx, operation, error) => {
         const because = error.code === 'balance_insufficient' ? 'balance' : 'capability';
@@ -143,6 +143,16 @@ export class Transfers implements OnModuleInit {
     );
   }
 
+  /** By the row's id among the transfers of its subcontract: those drawn on a charge carry the charge's group. */
+  private async findTransfer(stripe: StripeClient, operation: Operation): Promise<{ id: string } | null> {
+    const row = await this.uow.row<TransferRow>(null, TRANSFER_BY_OPERATION, [operation.id]);
+    if (row === null) return null;
+    for await (const transfer of stripe.transfers.list({ limit: 100, transfer_group: row.subcontract_id })) {
+      if (transfer.metadata.operation_id === operation.id) return { id: transfer.id };
+    }
+    return null;
+  }
+
   /** E08: the crew's claim on us becomes its balance at the provider. */
   private async record(tx: Tx, operation: Operation, transferId: string): Promise<void> {
     const found = await this.uow.row<TransferRow>(tx, TRANSFER_BY_OPERATION, [operation.id]);
@@ -182,11 +192,4 @@ export class Transfers implements OnModuleInit {
       });
     }
   }
-}
-
-async function findTransfer(stripe: StripeClient, operation: Operation): Promise<{ id: string } | null> {
-  for await (const transfer of stripe.transfers.list({ limit: 100 })) {
-    if (transfer.metadata.operation_id === operation.id) return { id: transfer.id };
-  }
-  return null;
 }

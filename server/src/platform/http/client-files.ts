@@ -2,6 +2,7 @@ import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import type { NextFunction, Request, Response } from 'express';
+import { compressedAssets } from './compressed-assets.ts';
 
 const SERVER_PATHS = /^\/(?:api|socket\.io)(?:\/|$)/;
 const HASHED = /[\\/]assets[\\/]/;
@@ -9,6 +10,7 @@ const HASHED = /[\\/]assets[\\/]/;
 /** Serves the built client; every other page address gets its one page, which routes by itself. */
 export function serveClient(app: NestExpressApplication, clientDist: string): void {
   const page = join(clientDist, 'index.html');
+  app.use(compressedAssets(clientDist));
   app.useStaticAssets(clientDist, {
     index: false,
     redirect: false,
