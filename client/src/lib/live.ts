@@ -73,15 +73,21 @@ function keysOf<Topic extends Hint['topic']>(
   return find?.(hint) ?? [];
 }
 
-/** After a reconnect or a gap: every live query on the screen once, spread over two seconds. Returns the stop. */
+/**
+ * When the line opens, and after a reconnect or a gap: every live query on the screen once, the latter two spread over
+ * two seconds. Returns the stop.
+ */
 export function refetchAfterGaps(client: QueryClient): () => void {
   let timer: ReturnType<typeof setTimeout> | undefined;
   const stop = line.onEvent((event) => {
     if (event.kind !== 'refresh') return;
-    timer ??= setTimeout(() => {
-      timer = undefined;
-      void client.invalidateQueries({ predicate: (query) => query.meta?.live === true });
-    }, Math.random() * JITTER_MS);
+    timer ??= setTimeout(
+      () => {
+        timer = undefined;
+        void client.invalidateQueries({ predicate: (query) => query.meta?.live === true });
+      },
+      event.atOnce ? 0 : Math.random() * JITTER_MS,
+    );
   });
   return () => {
     stop();

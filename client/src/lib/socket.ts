@@ -7,8 +7,11 @@ import type { Socket } from 'socket.io-client';
  * name is fetched again. Everything here survives a page without a line: nothing waits for the socket.
  */
 export type LineState = 'off' | 'connecting' | 'live' | 'reconnecting';
-/** `refresh`: hints may have been missed, so everything live is to be fetched again once. */
-export type LineEvent = { kind: 'hint'; hint: Hint } | { kind: 'refresh' };
+/**
+ * `refresh`: hints may have been missed, so everything live is to be fetched again once. `atOnce` when this page alone
+ * asks; after a dropped line all clients come back together.
+ */
+export type LineEvent = { kind: 'hint'; hint: Hint } | { kind: 'refresh'; atOnce: boolean };
 
 type LiveSocket = Socket<ServerToClientEvents, ClientToServerEvents>;
 
@@ -58,8 +61,9 @@ async function connect(): Promise<void> {
   opened.on('connect', () => {
     for (const { watch: item } of watches.values()) opened.emit('watch', item, () => undefined);
     setState('live');
-    // What was said while the line was down is lost: fetch everything live once.
-    if (wasLive) emit({ kind: 'refresh' });
+    // What was said while the line was down is lost, and so is what was said between a page's first requests and its
+    // line: someone back from the payment page would wait for a hint that came in between.
+    emit({ kind: 'refresh', atOnce: !wasLive });
     wasLive = true;
     lastSeq.clear();
   });
@@ -74,7 +78,7 @@ async function connect(): Promise<void> {
     if (!opened.active) void reopen(opened);
   });
   opened.on('hint', (hint) => {
-    if (hasGap(hint)) emit({ kind: 'refresh' });
+    if (hasGap(hint)) emit({ kind: 'refresh', atOnce: false });
     emit({ kind: 'hint', hint });
   });
 }

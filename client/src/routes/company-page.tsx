@@ -4,7 +4,7 @@ import { useTranslation } from 'react-i18next';
 import { useSearchParams } from 'react-router-dom';
 import { Page } from '../components/page.tsx';
 import { Loading, QueryErrorState } from '../components/states.tsx';
-import { companyQuery, useReadPayouts } from '../features/company/api/company.queries.ts';
+import { companyKeys, companyQuery, useReadPayouts } from '../features/company/api/company.queries.ts';
 import { CompanyForm } from '../features/company/components/company-form.tsx';
 import styles from '../features/company/components/company.module.css';
 import { Ladder } from '../features/company/components/ladder.tsx';
@@ -12,6 +12,7 @@ import { Payouts } from '../features/company/components/payouts.tsx';
 import { RateCardLink } from '../features/company/components/rate-card-link.tsx';
 import { Units } from '../features/company/components/units.tsx';
 import { useCan } from '../features/session/hooks/use-session.ts';
+import { useLiveHints } from '../lib/live.ts';
 import { queryClient } from '../lib/query-client.ts';
 
 export function loader() {
@@ -25,6 +26,8 @@ export default function CompanyPage() {
   const can = useCan();
   const company = useQuery(companyQuery);
   useBackFromPayouts();
+  // The provider goes on checking after its page was left, and tells us when it has done.
+  useLiveHints({ money: () => [companyKeys.own] });
   if (company.isPending) {
     return (
       <Page title={t('title')}>

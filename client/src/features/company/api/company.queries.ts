@@ -12,6 +12,7 @@ export const companyKeys = {
 export const companyQuery = queryOptions({
   queryKey: companyKeys.own,
   queryFn: ({ signal }) => api.get<OwnCompanyView>('/api/company', { signal }),
+  meta: { live: true },
 });
 
 /** What a ZIP code is known to be; a 404 for one that is not in the table. */
