@@ -10,7 +10,7 @@ export const routes: readonly FeatureRoute[] = [
   {
     path: '/open-scopes/:scopeId',
     audience: 'cutting_contractor',
-    words: ['scope', 'bid', 'talk'],
+    words: ['scope', 'bid', 'talk', 'rate-card', 'estimate'],
     page: () => import('./open-scope-page.tsx'),
   },
   {

@@ -55,6 +55,8 @@ export function BidPanel({ scope, body }: { scope: ScopeDetailView; body: ScopeB
           body={body}
           start={bid === null ? startOf(scope.id, body, draft.data?.draft ?? null) : bidValues(body, bid)}
           ownBid={bid}
+          offered={company.data.methods}
+          distanceMi={scope.distanceMi}
           onDone={() => setRevising(false)}
         />
       )}
@@ -84,7 +86,8 @@ function startOf(scopeId: string, body: ScopeBody, saved: Record<string, unknown
   return {
     ...empty,
     ...typed,
-    lines: empty.lines.map((line) => lines.find((one) => one?.cutId === line.cutId) ?? line),
+    lines: empty.lines.map((line) => ({ ...line, ...lines.find((one) => one?.cutId === line.cutId) })),
+    factors: { ...empty.factors, ...typed.factors },
     answers: empty.answers.map((row) => answers.find((one) => one?.item === row.item) ?? row),
   };
 }
