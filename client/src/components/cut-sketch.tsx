@@ -49,7 +49,12 @@ export function CutSketch({ cuts, look = 'full', cutCount = cuts.length, empty =
                 {cut.index + 1}
               </At>
               {cut.count > 1 && (
-                <At x={cut.box.x + cut.box.width} y={cut.box.y} box={box} className={styles.times}>
+                <At
+                  x={cut.box.x + cut.box.width}
+                  y={cut.box.y + cut.box.height}
+                  box={box}
+                  className={styles.times}
+                >
                   × {cut.count}
                 </At>
               )}
