@@ -10,6 +10,17 @@ export const errorCatalogue = {
     status: 401,
     message: 'That e-mail and password do not match an account that can sign in.',
   },
+  second_factor_needed: { status: 401, message: 'Now the code from your authenticator app.' },
+  wrong_code: { status: 401, message: 'That code does not fit, or was used before. Take the next one.' },
+  confirm_with_password: { status: 403, message: 'Say again who you are, with your password.' },
+  confirm_with_code: {
+    status: 403,
+    message: 'Say again who you are, with a code from your authenticator app.',
+  },
+  second_factor_required: {
+    status: 403,
+    message: 'Set up a second factor before you move money. Your account page does it in a minute.',
+  },
   forbidden: { status: 403, message: 'Your role does not allow this.' },
   not_from_here: { status: 403, message: 'The request did not come from this site.' },
   over_limit: { status: 403, message: 'This is above your limit in dollars. Ask an owner of your company.' },
@@ -21,6 +32,16 @@ export const errorCatalogue = {
   stale_version: {
     status: 409,
     message: 'Someone changed this meanwhile. Look at the newest version and try again.',
+  },
+  last_owner: {
+    status: 409,
+    message: 'A company keeps at least one owner. Make another person owner first.',
+  },
+  link_used: { status: 409, message: 'This link was used already. A link works once.' },
+  link_expired: { status: 409, message: 'This link has run out or was taken back. Ask for a new one.' },
+  has_account: {
+    status: 409,
+    message: 'This address has an account already, and an account belongs to one company.',
   },
   already_awarded: { status: 409, message: 'This scope has been awarded already.' },
   bids_closed: { status: 409, message: 'Bids were due; this one came too late.' },
@@ -50,6 +71,10 @@ export const errorCatalogue = {
   too_large: { status: 413, message: 'That is too large.' },
   wrong_type: { status: 415, message: 'That kind of file or body is not taken here.' },
   invalid_input: { status: 422, message: 'Some fields need another look.' },
+  link_unknown: {
+    status: 422,
+    message: 'This link is not whole, or not one of ours. Copy all of it from the mail.',
+  },
   too_many_requests: { status: 429, message: 'Too many tries. Wait a little.' },
   internal: { status: 500, message: 'Something went wrong on our side. Nothing you typed is lost.' },
   provider_unavailable: {

@@ -5,6 +5,7 @@ import { scopesAndBids } from './migrations/20261201-0002-scopes-and-bids.ts';
 import { work } from './migrations/20261201-0003-work.ts';
 import { money } from './migrations/20261201-0004-money.ts';
 import { rateCard } from './migrations/20261201-0005-rate-card.ts';
+import { accounts } from './migrations/20261201-0006-accounts.ts';
 import { ledgerSeal } from './migrations/20261201-0010-ledger-seal.ts';
 
 /** Plain SQL, up and down; one transaction each. One that has landed is never edited. */
@@ -14,7 +15,15 @@ export interface Migration {
   down: string;
 }
 
-export const migrations: readonly Migration[] = [platform, scopesAndBids, work, money, rateCard, ledgerSeal];
+export const migrations: readonly Migration[] = [
+  platform,
+  scopesAndBids,
+  work,
+  money,
+  rateCard,
+  accounts,
+  ledgerSeal,
+];
 
 // Two servers starting at once must not migrate twice; any constant number will do.
 const LOCK = 460_001;

@@ -14,7 +14,13 @@ import {
   type StatementView,
 } from '@kerfyard/common/payments';
 import type { Actor } from '@kerfyard/common/people';
-import { CurrentActor, Needs, RequestOrigin, type Origin } from '../platform/auth/access.decorators.ts';
+import {
+  CurrentActor,
+  Needs,
+  RecentSignIn,
+  RequestOrigin,
+  type Origin,
+} from '../platform/auth/access.decorators.ts';
 import { Payouts } from './payouts.ts';
 import { Reconciliation, type Difference } from './reconcile.ts';
 import { ReleaseService } from './releases.ts';
@@ -50,6 +56,7 @@ export class PaymentsController {
 
   @Post('subcontracts/:id/set-aside')
   @Needs('money.set_aside')
+  @RecentSignIn('money_movers')
   request(
     @CurrentActor() actor: Actor,
     @RequestOrigin() origin: Origin,
@@ -61,6 +68,7 @@ export class PaymentsController {
 
   @Post('releases')
   @Needs('money.release')
+  @RecentSignIn('money_movers')
   release(
     @CurrentActor() actor: Actor,
     @RequestOrigin() origin: Origin,
@@ -72,6 +80,7 @@ export class PaymentsController {
   @Post('company/payouts')
   @HttpCode(200)
   @Needs('money.payout')
+  @RecentSignIn('money_movers')
   onboard(@CurrentActor() actor: Actor): Promise<{ url: string }> {
     return this.payouts.onboardingUrl(actor);
   }

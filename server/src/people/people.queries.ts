@@ -6,13 +6,15 @@ export interface CredentialsRow {
   may_sign_in: boolean;
   /** Whether this address (of the network) was used by this person's own sessions before. */
   is_known_address: boolean;
+  has_second_factor: boolean;
 }
 
 /** $1 e-mail, $2 network address. */
 export const SELECT_CREDENTIALS = `
   SELECT u.id, u.password_hash, (u.email_verified_at IS NOT NULL AND u.deactivated_at IS NULL) AS may_sign_in,
     EXISTS (SELECT 1 FROM session s WHERE s.user_id = u.id AND s.ip = $2
-      AND s.created_at > clock_timestamp() - interval '90 days') AS is_known_address
+      AND s.created_at > clock_timestamp() - interval '90 days') AS is_known_address,
+    EXISTS (SELECT 1 FROM second_factor f WHERE f.user_id = u.id AND f.confirmed_at IS NOT NULL) AS has_second_factor
   FROM app_user u WHERE u.email = $1`;
 
 export const INSERT_SIGN_UP = `

@@ -1,7 +1,7 @@
 import { Inject, Injectable, type OnModuleInit } from '@nestjs/common';
 import type { SignUp } from '@kerfyard/common/people';
 import type { Origin } from '../platform/auth/access.decorators.ts';
-import { isGuessable } from '../platform/auth/guessable-password.ts';
+import { demandUnguessable } from '../platform/auth/unguessable.ts';
 import { Passwords } from '../platform/auth/passwords.ts';
 import { Audit } from '../platform/audit/audit.ts';
 import { CONFIG, type Config } from '../platform/config/config.ts';
@@ -56,12 +56,7 @@ export class SignUpService implements OnModuleInit {
   }
 
   async signUp(input: SignUp, origin: Origin): Promise<void> {
-    if (isGuessable(input.password, [input.name, input.email, input.company.name])) {
-      throw AppError.field(
-        'password',
-        'This is among the first that are tried. A few unrelated words work well',
-      );
-    }
+    demandUnguessable(input.password, [input.name, input.email, input.company.name]);
     await this.limits.take([
       { parts: ['sign-up', 'address', origin.ip], windows: perAddress },
       { parts: ['sign-up', 'e-mail', input.email], windows: perEmail },

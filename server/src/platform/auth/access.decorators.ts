@@ -15,6 +15,17 @@ export const SignedIn = () => SetMetadata(ACCESS, { kind: 'signed_in' } satisfie
 export const Needs = (name: PermissionName) =>
   SetMetadata(ACCESS, { kind: 'permission', name } satisfies Access);
 
+export const RECENT_SIGN_IN = 'kerfyard:recent-sign-in';
+export type RecentSignInFrom = 'everyone' | 'second_factor_holders' | 'money_movers';
+
+/**
+ * For sensitive acts: the session's holder gave a password or a code within ten minutes; else 403 with the code that
+ * says which to ask for, and the page goes on with the same request afterwards. `second_factor_holders`: asked only of
+ * those who have one. `money_movers`: so too, but whoever has none is refused where the settings demand one.
+ * Beside `@SignedIn()` or `@Needs()`.
+ */
+export const RecentSignIn = (from: RecentSignInFrom = 'everyone') => SetMetadata(RECENT_SIGN_IN, from);
+
 export interface RequestWithActor extends Request {
   actor?: Actor;
   id: string;

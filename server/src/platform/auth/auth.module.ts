@@ -9,9 +9,14 @@ import { AccessTokenStrategy } from './access-token.strategy.ts';
 import { AccessTokens } from './access-tokens.ts';
 import { Actors } from './actors.ts';
 import { Passwords } from './passwords.ts';
+import { RecentSignInGuard } from './recent-sign-in.guard.ts';
+import { SecondFactors } from './second-factors.ts';
 import { Sessions } from './sessions.ts';
 
-/** Sessions, passwords, limits, and the guards before every route: access first, then how often. */
+/**
+ * Sessions, passwords, second factors, limits, and the guards before every route: access first, then whether its person
+ * said lately who they are, then how often.
+ */
 @Global()
 @Module({
   imports: [PassportModule, JwtModule.register({})],
@@ -22,9 +27,11 @@ import { Sessions } from './sessions.ts';
     AccessTokenStrategy,
     Passwords,
     RateLimits,
+    SecondFactors,
     { provide: APP_GUARD, useClass: AccessGuard },
+    { provide: APP_GUARD, useClass: RecentSignInGuard },
     { provide: APP_GUARD, useClass: ChangeLimitGuard },
   ],
-  exports: [Sessions, Actors, AccessTokens, Passwords, RateLimits],
+  exports: [Sessions, Actors, AccessTokens, Passwords, RateLimits, SecondFactors],
 })
 export class AuthModule {}

@@ -46,3 +46,43 @@ export const SELECT_DEAD_SESSIONS = `
   WHERE NOT EXISTS (
     SELECT 1 FROM session s JOIN app_user u ON u.id = s.user_id
     WHERE s.id = open.id AND u.deactivated_at IS NULL AND ${live('$2')})`;
+
+export interface ProofRow {
+  is_recent: boolean;
+  has_second_factor: boolean;
+}
+/** $1 session, $2 seconds: whether its holder said lately who they are, and by what they can. */
+export const SELECT_PROOF = `
+  SELECT s.proved_at > clock_timestamp() - $2 * interval '1 second' AS is_recent,
+    EXISTS (SELECT 1 FROM second_factor f WHERE f.user_id = s.user_id AND f.confirmed_at IS NOT NULL) AS has_second_factor
+  FROM session s WHERE s.id = $1`;
+
+export const PROVE_SESSION = `UPDATE session SET proved_at = clock_timestamp() WHERE id = $1`;
+
+/** $1 user, $2 the session that stays (or null), $3 why. */
+export const END_SESSIONS_OF = `
+  UPDATE session SET ended_at = clock_timestamp(), ended_because = $3, successor_sealed = NULL
+  WHERE user_id = $1 AND id IS DISTINCT FROM $2::uuid AND ended_at IS NULL RETURNING id`;
+
+/** $1 session, $2 its user. */
+export const SELECT_OWN_SESSION = `SELECT id FROM session WHERE id = $1 AND user_id = $2 AND ended_at IS NULL`;
+
+export interface OwnSessionRow {
+  id: string;
+  ip: string;
+  user_agent: string;
+  created_at: Date;
+  last_used_at: Date;
+}
+/** $1 user, $2 idle seconds. */
+export const SELECT_OWN_SESSIONS = `
+  SELECT s.id, s.ip, s.user_agent, s.created_at, s.last_used_at FROM session s
+  WHERE s.user_id = $1 AND ${live('$2')} ORDER BY s.last_used_at DESC, s.id LIMIT 100`;
+
+export interface SessionEndRow {
+  idle_end: Date;
+  expires_at: Date;
+}
+/** $1 session, $2 idle seconds. */
+export const SELECT_SESSION_END = `
+  SELECT last_used_at + $2 * interval '1 second' AS idle_end, expires_at FROM session WHERE id = $1`;

@@ -17,10 +17,13 @@ import {
 } from './refresh-token.ts';
 import {
   END_SESSION,
+  END_SESSIONS_OF,
   INSERT_SESSION,
   LOCK_SESSION,
+  PROVE_SESSION,
   ROTATE_SESSION,
   SELECT_DEAD_SESSIONS,
+  SELECT_OWN_SESSION,
   SELECT_SESSION_STATE,
   TOUCH_SESSION,
   type SessionRow,
@@ -122,6 +125,46 @@ export class Sessions {
     if (token === null) return;
     const isEnded = await this.uow.run((tx) => this.endHeldBy(tx, token, 'signed_out', origin));
     if (isEnded) this.hints.endSession(token.sessionId);
+  }
+
+  /** Ends all sessions of a person but one, and their sockets once the transaction has committed. How many. */
+  async endAllOf(
+    tx: Tx,
+    userId: string,
+    ending: { except: string | null; because: string; origin: Origin },
+  ): Promise<number> {
+    const { except, because, origin } = ending;
+    const ended = await this.uow.rows<{ id: string }>(tx, END_SESSIONS_OF, [userId, except, because]);
+    for (const { id } of ended) {
+      await this.audit.write(tx, {
+        actor: null,
+        action: 'session.ended',
+        subject: { type: 'session', id },
+        detail: { because, userId },
+        origin,
+      });
+      this.uow.afterCommit(tx, () => this.hints.endSession(id));
+    }
+    return ended.length;
+  }
+
+  /** Ends one session of a person, and its sockets after the commit. Whether it was theirs and open. */
+  async endOneOf(
+    tx: Tx,
+    userId: string,
+    ending: { sessionId: string; because: string; origin: Origin },
+  ): Promise<boolean> {
+    const { sessionId, because, origin } = ending;
+    const own = await this.uow.row(tx, SELECT_OWN_SESSION, [sessionId, userId]);
+    if (own === null) return false;
+    await this.end(tx, sessionId, because, origin);
+    this.uow.afterCommit(tx, () => this.hints.endSession(sessionId));
+    return true;
+  }
+
+  /** The holder of the session has just given a password or a code. */
+  async prove(tx: Tx, sessionId: string): Promise<void> {
+    await this.uow.rows(tx, PROVE_SESSION, [sessionId]);
   }
 
   private async state(tx: Tx, sessionId: string): Promise<SessionRow | null> {

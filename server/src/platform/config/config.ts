@@ -25,6 +25,7 @@ const environmentSchema = z.object({
   LOG_LEVEL: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
   RATE_LIMIT_FACTOR: z.coerce.number().min(1).default(1),
   TRUST_PROXY: z.coerce.number().int().min(0).default(0),
+  SECOND_FACTOR: z.enum(['optional', 'money']).optional(),
   DRAIN_MS: z.coerce.number().int().min(0).max(60_000).default(0),
 });
 
@@ -51,6 +52,8 @@ export interface Config {
   rateLimitFactor: number;
   /** How many proxies stand before the server; 0 believes no forwarded address. */
   trustProxy: number;
+  /** `money`: who sets aside, releases or takes payouts must have a second factor. The default in production. */
+  secondFactor: 'optional' | 'money';
   /** How long a stopping server still answers while it says it is not ready. */
   drainMs: number;
 }
@@ -100,6 +103,7 @@ export function readConfig(env: NodeJS.ProcessEnv = process.env): Config {
     logLevel: e.LOG_LEVEL,
     rateLimitFactor: e.RATE_LIMIT_FACTOR,
     trustProxy: e.TRUST_PROXY,
+    secondFactor: e.SECOND_FACTOR ?? (e.KERFYARD_MODE === 'production' ? 'money' : 'optional'),
     drainMs: e.DRAIN_MS,
   };
 }

@@ -3,6 +3,7 @@ import { AppError } from '../http/app-error.ts';
 
 /** The one place where a constraint's name becomes an answer for people. */
 const codes: Record<string, ErrorCode> = {
+  app_user_email_key: 'has_account',
   award_one_standing: 'already_awarded',
   visit_crew_once: 'window_taken',
   visit_truck_once: 'window_taken',

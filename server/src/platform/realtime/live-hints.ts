@@ -35,4 +35,9 @@ export class LiveHints {
     this.server?.to(rooms.session(sessionId)).emit('session_ended');
     this.server?.in(rooms.session(sessionId)).disconnectSockets(true);
   }
+
+  /** Close the sockets of a person whose role changed: they come back as who they are now. */
+  reconnect(userId: string): void {
+    this.server?.in(rooms.user(userId)).disconnectSockets(true);
+  }
 }
