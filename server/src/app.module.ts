@@ -8,6 +8,8 @@ import { ScopesModule } from './scopes/scopes.module.ts';
 import { PaymentsModule } from './payments/payments.module.ts';
 import { DemoModule } from './demo/demo.module.ts';
 import { FilesModule } from './files/files.module.ts';
+import { AccountModule } from './account/account.module.ts';
+import { MembersModule } from './members/members.module.ts';
 import { PeopleModule } from './people/people.module.ts';
 import { PlacesModule } from './places/places.module.ts';
 import { RatesModule } from './rates/rates.module.ts';
@@ -23,6 +25,8 @@ import { TalkModule } from './talk/talk.module.ts';
 /** Features, one line each. */
 const features: NonNullable<DynamicModule['imports']> = [
   PeopleModule,
+  AccountModule,
+  MembersModule,
   PlacesModule,
   FilesModule,
   TalkModule,

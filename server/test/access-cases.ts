@@ -15,6 +15,9 @@ export interface Ids {
   completion: string;
   crew: string;
   truck: string;
+  member: string;
+  invitation: string;
+  session: string;
 }
 
 /** One request with ids in it: valid in every other way, so that only access can refuse it. */
@@ -37,6 +40,7 @@ const put = (route: string, path: AccessCase['path'], body: AccessCase['body']):
 });
 const remove = (route: string, path: AccessCase['path']): AccessCase => ({ route: `DELETE ${route}`, path });
 
+const limits = { signCents: null, setAsideCents: null, changeCents: null };
 const window = () => ({ startsAt: inDays(3), endsAt: inDays(3.3) });
 const ofScope =
   (rest = '') =>
@@ -139,6 +143,15 @@ export const accessCases: AccessCase[] = [
   ),
   post('/api/completions/:id/accept', ({ completion }) => `/api/completions/${completion}/accept`),
   post('/api/completions/:id/withdraw', ({ completion }) => `/api/completions/${completion}/withdraw`),
+  put(
+    '/api/company/people/:id',
+    ({ member }) => `/api/company/people/${member}`,
+    () => ({ role: 'field', limits }),
+  ),
+  post('/api/company/people/:id/deactivate', ({ member }) => `/api/company/people/${member}/deactivate`),
+  post('/api/company/people/:id/reactivate', ({ member }) => `/api/company/people/${member}/reactivate`),
+  remove('/api/company/invitations/:id', ({ invitation }) => `/api/company/invitations/${invitation}`),
+  remove('/api/account/sessions/:id', ({ session }) => `/api/account/sessions/${session}`),
   post(
     '/api/releases',
     () => '/api/releases',
@@ -158,6 +171,9 @@ export const missingIds = (): Ids => ({
   completion: randomUUID(),
   crew: randomUUID(),
   truck: randomUUID(),
+  member: randomUUID(),
+  invitation: randomUUID(),
+  session: randomUUID(),
   company: randomUUID(),
 });
 
@@ -173,5 +189,8 @@ export const foreignIds = (world: World, scope: string, file: string): Ids => ({
   completion: world.completion.id,
   crew: world.work.crew.crewId,
   truck: world.work.crew.truckId,
+  member: world.work.crew.owner.userId,
+  invitation: world.invitationId,
+  session: world.work.crew.owner.client.cookie('refresh')?.split('.')[0] ?? '',
   company: world.work.crew.id,
 });

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import type { CompanyKind, EditCompany, MeView, OwnCompanyView, Role } from '@kerfyard/common/people';
+import { linkToken } from '../../src/people/link-token.ts';
 import { verifyToken } from '../../src/people/verify-token.ts';
 import { Client } from '../client.ts';
 import { sql } from '../database.ts';
@@ -128,29 +129,42 @@ export interface PersonOptions {
   changeLimitCents?: number | null;
 }
 
-/** One more person of a company. There is no invitation yet, so the row is written and the sign-in is real. */
+/** An owner's invitation, on its way by mail. Gives its id. */
+export async function invite(
+  company: Company,
+  email: string,
+  role: Role,
+  limits: PersonOptions = {},
+): Promise<string> {
+  const id = randomUUID();
+  const body = {
+    id,
+    email,
+    role,
+    limits: {
+      signCents: limits.signLimitCents ?? null,
+      setAsideCents: limits.setAsideLimitCents ?? null,
+      changeCents: limits.changeLimitCents ?? null,
+    },
+  };
+  await expectStatus(company.owner.client.post('/api/company/invitations', body), 201);
+  return id;
+}
+
+/** The token that an invitation's mail carries. */
+export const invitationToken = (id: string): string =>
+  linkToken(process.env.TEST_SIGNING_SECRET ?? '', 'invitation', id);
+
+/** One more person of a company: invited, accepted, signed in. */
 export async function addPerson(company: Company, role: Role, limits: PersonOptions = {}): Promise<Person> {
-  const userId = randomUUID();
   const email = uniqueEmail();
   const name = `Ben Alder ${unique()}`;
-  await sql(
-    `INSERT INTO app_user (id, email, name, password_hash, email_verified_at)
-     SELECT $1, $2, $3, password_hash, app_now() FROM app_user WHERE id = $4`,
-    [userId, email, name, company.owner.userId],
-  );
-  await sql(
-    `INSERT INTO membership (user_id, company_id, role, sign_limit_cents, set_aside_limit_cents, change_limit_cents)
-     VALUES ($1, $2, $3, $4, $5, $6)`,
-    [
-      userId,
-      company.id,
-      role,
-      limits.signLimitCents ?? null,
-      limits.setAsideLimitCents ?? null,
-      limits.changeLimitCents ?? null,
-    ],
-  );
-  return { client: await signIn(email), userId, name, email, companyId: company.id };
+  const token = invitationToken(await invite(company, email, role, limits));
+  const accepting = { token, name, password: PASSWORD };
+  await expectStatus(new Client().post('/api/auth/invitation/accept', accepting), 204);
+  const client = await signIn(email);
+  const me = (await expectStatus(client.get('/api/auth/me'), 200)).body as MeView;
+  return { client, userId: me.user.id, name, email, companyId: company.id };
 }
 
 /** A staff person, signed in; `by` is anyone whose password is the builders'. */

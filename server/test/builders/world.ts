@@ -7,7 +7,7 @@ import type { SubcontractView } from '@kerfyard/common/subcontracts';
 import type { ThreadView } from '@kerfyard/common/talk';
 import { sql } from '../database.ts';
 import { readWork, workToRelease, type Work } from './paid-work.ts';
-import { expectStatus, makeCuttingContractor, type Person } from './people.ts';
+import { expectStatus, invite, makeCuttingContractor, uniqueEmail, type Person } from './people.ts';
 import { lumpBid, makeDraft, placeBid, publishScope } from './scopes.ts';
 
 /** One of everything that two companies can have together or alone, and the ids a stranger might come by. */
@@ -23,6 +23,7 @@ export interface World {
   threadId: string;
   gcFileId: string;
   crewFileId: string;
+  invitationId: string;
 }
 
 /** A photograph with nothing in it, uploaded by this person. */
@@ -77,5 +78,6 @@ export async function buildWorld(): Promise<World> {
     threadId: await openThread(work, row.scope_id),
     gcFileId: await uploadPhoto(work.gc.owner),
     crewFileId: await uploadPhoto(work.crew.owner),
+    invitationId: await invite(work.crew, uniqueEmail(), 'manager'),
   };
 }
