@@ -10,7 +10,7 @@ import { DemoPeople } from './demo-people.ts';
 
 const demoSignInSchema = z.strictObject({ key: z.string().min(1).max(80) });
 
-/** One press into the demo. Where there is no demo, nothing here exists. */
+/** One press into the demo. Where there is no demo it has nobody, and nobody can be entered. */
 @Controller('demo')
 export class DemoController {
   constructor(

@@ -63,7 +63,7 @@ describe('the demo', () => {
   });
 
   it('shows no door where there is no demo', async () => {
-    const seen = answerRequests({ 'GET /api/demo/people': () => ({ status: 404 }) });
+    const seen = answerRequests({ 'GET /api/demo/people': () => ({ status: 200, body: [] }) });
     renderInApp(<DemoDoors onSignedIn={() => undefined} />);
     await vi.waitFor(() => expect(seen).toHaveLength(1));
     expect(screen.queryByRole('button')).toBeNull();

@@ -1,20 +1,12 @@
 import type { DemoPersonView, MeView } from '@kerfyard/common/people';
 import { queryOptions, useMutation } from '@tanstack/react-query';
 import { api } from '../../../lib/api-client.ts';
-import { isApiError } from '../../../lib/api-error.ts';
 
 /** The people of the demo; none where there is no demo. */
 export const demoPeopleQuery = queryOptions({
   queryKey: ['demo', 'people'] as const,
   staleTime: Infinity,
-  queryFn: async ({ signal }): Promise<DemoPersonView[]> => {
-    try {
-      return await api.get<DemoPersonView[]>('/api/demo/people', { signal, whenSignedOut: 'throw' });
-    } catch (error) {
-      if (isApiError(error, 'not_found')) return [];
-      throw error;
-    }
-  },
+  queryFn: ({ signal }) => api.get<DemoPersonView[]>('/api/demo/people', { signal, whenSignedOut: 'throw' }),
 });
 
 /** One press into the demo. */
