@@ -83,7 +83,7 @@ function Subcontract({ subcontract }: { subcontract: SubcontractView }) {
             {isSigned ? (
               <>
                 <Visits subcontract={subcontract} />
-                <Completions subcontract={subcontract} />
+                {subcontract.visits.length > 0 && <Completions subcontract={subcontract} />}
               </>
             ) : (
               paper
@@ -120,6 +120,7 @@ function Visits({ subcontract }: { subcontract: SubcontractView }) {
   const { t } = useTranslation('work');
   const can = useCan();
   const [proposing, setProposing] = useState(false);
+  const isPlanned = subcontract.visits.some((visit) => visit.status !== 'cancelled');
   const mayPropose = subcontract.status === 'active' && can('visit.propose');
   return (
     <section className={styles.section} aria-labelledby="visits">
@@ -134,7 +135,7 @@ function Visits({ subcontract }: { subcontract: SubcontractView }) {
       ))}
       {mayPropose && !proposing && (
         <div>
-          <Button size="3" onClick={() => setProposing(true)}>
+          <Button size="3" variant={isPlanned ? 'soft' : 'solid'} onClick={() => setProposing(true)}>
             {t('item.propose')}
           </Button>
         </div>

@@ -27,8 +27,13 @@ const cases: [string, object, Next | null][] = [
   ],
   ['no money set aside', { sov: [line('not_set_aside')] }, { step: 'setAside', isOurs: true }],
   [
-    'no money, as the crew',
+    'no money and no visit, as the crew',
     { side: 'crew', sov: [line('not_set_aside')] },
+    { step: 'propose', isOurs: true },
+  ],
+  [
+    'a confirmed visit without money, as the crew',
+    { side: 'crew', sov: [line('not_set_aside')], visits: [visit('confirmed')] },
     { step: 'setAside', isOurs: false },
   ],
   ['money and no visit', {}, { step: 'propose', isOurs: false }],

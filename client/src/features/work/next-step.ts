@@ -33,7 +33,7 @@ export function nextOf(subcontract: SubcontractView): Next | null {
   return step === null ? null : { step, isOurs: doneBy[step] === side };
 }
 
-function activeStep({ sov, visits, completions }: SubcontractView): Step | null {
+function activeStep({ side, sov, visits, completions }: SubcontractView): Step | null {
   const hasCompletion = (status: string) => completions.some((completion) => completion.status === status);
   if (hasCompletion('accepted')) return 'release';
   if (hasCompletion('submitted')) return 'accept';
@@ -44,8 +44,12 @@ function activeStep({ sov, visits, completions }: SubcontractView): Step | null 
     (visit) => visit.status === 'finished' && visit.sovLineIds.some((id) => open.has(id)),
   );
   if (isCut) return 'complete';
-  if (sov.some((line) => line.state === 'not_set_aside' && line.amountCents > 0)) return 'setAside';
+  // Someone waits for an answer.
   if (hasVisit('proposed')) return 'confirm';
-  if (hasVisit('confirmed')) return 'start';
+  const isPlanned = hasVisit('confirmed');
+  const lacksMoney = sov.some((line) => line.state === 'not_set_aside' && line.amountCents > 0);
+  // A crew need not wait for the money to offer windows; only the visit's start does.
+  if (lacksMoney && (side === 'gc' || isPlanned)) return 'setAside';
+  if (isPlanned) return 'start';
   return sov.every((line) => line.state === 'released') ? null : 'propose';
 }

@@ -73,7 +73,6 @@ export function StatementTable({ statement, timeZone, ofOne = false }: Statement
   const what: Column<StatementLine> = {
     key: 'kind',
     head: t('statement.kind'),
-    isRowHead: true,
     cell: (line) => (
       <>
         {kindOf(line)}

@@ -104,7 +104,7 @@ function ProposeForm(props: {
         }))}
       />
       <fieldset className={styles.windows}>
-        <Text as="div" weight="medium" asChild>
+        <Text size="2" weight="medium" mb="2" asChild>
           <legend>{t('propose.windows')}</legend>
         </Text>
         {windows.fields.map((field, index) => (

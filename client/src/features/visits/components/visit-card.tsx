@@ -3,10 +3,12 @@ import { Button, Text, TextArea } from '@radix-ui/themes';
 import { useState } from 'react';
 import { useTranslation } from 'react-i18next';
 import { ConfirmDialog } from '../../../components/confirm-dialog.tsx';
+import { TextLink } from '../../../components/link.tsx';
 import { QueryErrorState } from '../../../components/states.tsx';
 import { StatusWord } from '../../../components/status-word.tsx';
 import { formatDateTime, formatTime } from '../../../lib/format.ts';
 import { useIsLive } from '../../../lib/live.ts';
+import { paths } from '../../../lib/paths.ts';
 import { useCan } from '../../session/hooks/use-session.ts';
 import { useCancelVisit, useConfirmVisit, useFinishVisit, useStartVisit } from '../api/visits.queries.ts';
 import { VisitStatusWord } from './visit-status.tsx';
@@ -16,7 +18,7 @@ import styles from './visits.module.css';
 export function VisitCard({ visit }: { visit: VisitView }) {
   const { t } = useTranslation('visits');
   return (
-    <article className={styles.visit}>
+    <article className={`${styles.visit} k-field`}>
       <div className={styles.head}>
         <VisitStatusWord status={visit.status} />
         <Text size="2" color="gray">
@@ -26,6 +28,9 @@ export function VisitCard({ visit }: { visit: VisitView }) {
       {visit.window !== null && <Text weight="medium">{windowWords(visit.window, visit.timeZone)}</Text>}
       {visit.note !== '' && <Text>{visit.note}</Text>}
       {visit.status === 'cancelled' && <Text color="gray">{visit.cancelReason}</Text>}
+      {visit.status !== 'cancelled' && (
+        <TextLink to={paths.jobSheet(visit.subcontractId, visit.id)}>{t('card.jobSheet')}</TextLink>
+      )}
       {visit.status === 'proposed' && <Offers visit={visit} />}
       {visit.status === 'confirmed' && <Ready visit={visit} />}
       {visit.status === 'on_site' && <OnSite visit={visit} />}

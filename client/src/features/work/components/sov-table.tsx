@@ -3,6 +3,7 @@ import { useTranslation } from 'react-i18next';
 import { DataTable, type Column } from '../../../components/data-table.tsx';
 import { MoneyText } from '../../../components/money-text.tsx';
 import { StatusWord, type StatusTone } from '../../../components/status-word.tsx';
+import styles from './work.module.css';
 
 const tones: Record<SovLineState, StatusTone> = {
   not_set_aside: 'quiet',
@@ -27,7 +28,11 @@ export function SovTable({ subcontract }: { subcontract: SubcontractView }) {
     {
       key: 'state',
       head: t('sov.state'),
-      cell: (line) => <StatusWord tone={tones[line.state]}>{t(`sov.states.${line.state}`)}</StatusWord>,
+      cell: (line) => (
+        <span className={styles.noWrap}>
+          <StatusWord tone={tones[line.state]}>{t(`sov.states.${line.state}`)}</StatusWord>
+        </span>
+      ),
       csv: (line) => line.state,
     },
     {
