@@ -20,7 +20,7 @@ export interface PriceScale {
   ticks: number[];
 }
 
-const WANTED_TICKS = 4;
+const WANTED_TICKS = 3;
 
 /**
  * A scale around a set of amounts with round ticks. It does not begin at zero: what counts is how far bids stand

@@ -107,7 +107,8 @@ export function TabulationTable({ view, bids, canPlug, onPlug, award }: Tabulati
               }
             />
             <tr className={styles.awards}>
-              <td colSpan={2} />
+              <td />
+              <td />
               {bids.map((compared) => (
                 <td key={compared.bid.id} className={styles.right}>
                   {award(compared)}
@@ -129,9 +130,8 @@ function SumRow(props: {
 }) {
   return (
     <tr className={props.isTotal === true ? styles.total : undefined}>
-      <th scope="row" colSpan={2}>
-        {props.label}
-      </th>
+      <th scope="row">{props.label}</th>
+      <td />
       {props.bids.map((compared) => (
         <td key={compared.bid.id} className={styles.right}>
           {props.cell(compared)}

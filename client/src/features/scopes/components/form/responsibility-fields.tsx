@@ -100,7 +100,7 @@ function SheetRow(props: {
             checked={row.by === by}
             onChange={() => onChange({ ...row, by, name: by === 'other' ? row.name : '' })}
           />
-          <span className="k-hidden">{t(`sheet.holders.${by}`)}</span>
+          <span className={styles.holderName}>{t(`sheet.holders.${by}`)}</span>
         </label>
       ))}
       {row.by === 'other' && (
