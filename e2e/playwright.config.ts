@@ -1,6 +1,8 @@
 import { existsSync } from 'node:fs';
 import { defineConfig } from '@playwright/test';
 
+const ownStack = JSON.parse(process.env.OWN_STACK ?? '{}') as { BASE_URL?: string };
+const inOwnStack = 'the-thin-whole.spec.ts';
 const debianBrowsers = ['/usr/bin/chromium', '/usr/bin/chromium-headless-shell'];
 
 export default defineConfig({
@@ -12,6 +14,11 @@ export default defineConfig({
   fullyParallel: true,
   forbidOnly: Boolean(process.env.CI),
   reporter: [['list']],
+  projects: [
+    // The longest first.
+    { name: 'own stack', testMatch: inOwnStack, use: { baseURL: ownStack.BASE_URL } },
+    { name: 'shared stack', testIgnore: inOwnStack },
+  ],
   // Not webServer: journeys also need the addresses of the database, the stand-ins and the stack's controls, which the
   // setup puts into the environment before workers start and read this file again.
   globalSetup: './global-setup.mjs',
