@@ -10,6 +10,7 @@ export const programs = {
   migrate: inRoot('server/dist/migrate.js'),
   seed: inRoot('server/dist/seed.js'),
   staff: inRoot('server/dist/staff.js'),
+  books: inRoot('server/dist/books.js'),
   stripe: inRoot('server/dist-fakes/stripe/main.js'),
   mail: inRoot('server/dist-fakes/mail/main.js'),
 };

@@ -48,7 +48,8 @@ async function lockHome(places, shutdown) {
   shutdown.add(lock.release);
   const launchers = npmLaunchers();
   lock.describe({ launchers });
-  return (url, databasePort) => lock.describe({ launchers, url, databasePort });
+  return (url, { postgres, stripe }) =>
+    lock.describe({ launchers, url, databasePort: postgres, stripePort: stripe });
 }
 
 /** The ports of a run. Only the app's own is fixed: the others are found through the links on the page. */
@@ -141,7 +142,7 @@ export async function openLocalRun({ mode, appUrlOf, workspaces, shutdown = crea
     ]),
   );
   await seedOnce({ places, env: ownerEnv });
-  return { ...context, env, tellUrl: (url) => tell(url, ports.postgres) };
+  return { ...context, env, tellUrl: (url) => tell(url, ports) };
 }
 
 /** Opens this checkout's database. The programs are looked for first, since installing them shows its own progress. */

@@ -60,7 +60,7 @@ function withDatabase(url: string | undefined, name: string): string {
   return address.href;
 }
 
-async function freePort(): Promise<number> {
+export async function freePort(): Promise<number> {
   const probe = createServer().listen(0, '127.0.0.1');
   await once(probe, 'listening');
   const { port } = probe.address() as AddressInfo;

@@ -20,11 +20,12 @@ import { wireMoney, type MoneyServices } from './money-services.ts';
  * accepted, released, with jobs in any order and twice, lost replies, clocks that jump, a crew that is not ready. After
  * every step the books hold; at the end of each everything has come to rest, equals the model and the provider.
  *
- * KERFYARD_HISTORIES how many, KERFYARD_SEED and KERFYARD_PATH repeat one that failed (`npm run simulate`).
+ * KERFYARD_HISTORIES how many, KERFYARD_SEED, KERFYARD_PATH and KERFYARD_REPLAY repeat one that failed (`npm run simulate`).
  */
 const HISTORIES = Number(process.env.KERFYARD_HISTORIES ?? 200);
 const seed = Number(process.env.KERFYARD_SEED ?? Math.floor(Math.random() * 2 ** 31));
 const path = process.env.KERFYARD_PATH;
+const replayPath = process.env.KERFYARD_REPLAY;
 const MAX_STEPS = 30;
 
 jest.setTimeout(Math.max(240_000, HISTORIES * 3_000));
@@ -183,11 +184,14 @@ const terms = fc.record({
 
 describe('money over random histories', () => {
   it(`B-I1 to B-I11 hold after every step of ${HISTORIES} histories (seed ${seed})`, async () => {
-    if (process.env.KERFYARD_HISTORIES !== undefined) console.log(`seed ${seed}, ${HISTORIES} histories`);
     await fc.assert(
       fc.asyncProperty(
         terms,
-        fc.commands(steps, { maxCommands: MAX_STEPS, size: 'max' }),
+        fc.commands(steps, {
+          maxCommands: MAX_STEPS,
+          size: 'max',
+          ...(replayPath === undefined ? {} : { replayPath }),
+        }),
         async (agreed, commands) => {
           const history = await begin(agreed);
           await fc.asyncModelRun(() => history, commands);
