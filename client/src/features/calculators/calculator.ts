@@ -100,6 +100,8 @@ export interface ResultBlock {
   readonly name?: string;
   /** A heading that is ready, where it holds what was chosen. */
   readonly option?: { readonly group: string; readonly value: string };
+  /** A heading put together from texts that are ready and words of the catalogue. */
+  readonly heading?: readonly (string | { readonly word: string })[];
   /** One of three ways side by side. */
   readonly isWay?: boolean;
   /** The way that was chosen. */
@@ -129,6 +131,7 @@ export interface Calculator<Fields extends FieldSpecs = FieldSpecs> {
   readonly cautions: readonly string[];
   /** @throws CuttingInputError whose `field` is a field's name, or a row's place and column */
   readonly compute: (values: ValuesOf<Fields>) => Result;
+  /** What is drawn beside the results; undefined where there is nothing to draw. */
   readonly draw?: (values: ValuesOf<Fields>) => ReactNode;
 }
 

@@ -1,7 +1,7 @@
 import { screen, waitFor, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import i18next from 'i18next';
-import { beforeAll, describe, expect, it } from 'vitest';
+import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { loadWords } from '../../lib/i18n.ts';
 import { renderInApp } from '../../test/render.tsx';
 import type { Calculator, FieldSpec, RawValues, ResultFigure } from './calculator.ts';
@@ -9,6 +9,9 @@ import { calculatorLoaders, calculatorSlugs, wordsOfCalculator, type CalculatorS
 import { CalculatorView } from './components/calculator-view.tsx';
 import { evaluate } from './evaluate.ts';
 import { initialValues, readAddress, writeAddress } from './inputs.ts';
+
+// Finding fields by role and name is slow on a busy machine.
+vi.setConfig({ testTimeout: 20_000 });
 
 const calculators = new Map<CalculatorSlug, Calculator>();
 beforeAll(async () => {

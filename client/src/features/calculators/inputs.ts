@@ -88,8 +88,11 @@ export function readValues(
       }),
     );
   }
-  return { values, problems };
+  return { values, problems: Object.keys(problems).length === 0 ? noProblems : problems };
 }
+
+// One and the same object: fields that did not change need not be drawn anew.
+const noProblems: Problems = {};
 
 /** `1,234.5` → 1234.5; anything that is no number stays the text it is, for the engine to refuse. */
 export function typedNumber(text: string): number | string {

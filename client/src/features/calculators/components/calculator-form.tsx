@@ -1,5 +1,6 @@
+import { memo } from 'react';
 import { useTranslation } from 'react-i18next';
-import type { Calculator, FieldSpec } from '../calculator.ts';
+import type { Calculator, FieldSpec, RawValue } from '../calculator.ts';
 import type { Inputs } from '../hooks/use-inputs-in-address.ts';
 import type { Problems } from '../inputs.ts';
 import { ChoiceInput, NumberInput, SetInput, SwitchInput } from './calculator-fields.tsx';
@@ -26,11 +27,13 @@ export function CalculatorForm({ calculator, inputs, problems }: CalculatorFormP
               return spec === undefined ? null : (
                 <Field
                   key={name}
-                  calculator={calculator}
+                  calculator={calculator.name}
                   name={name}
                   spec={spec}
-                  inputs={inputs}
-                  problems={problems}
+                  value={inputs.raw[name] ?? ''}
+                  problem={problems[name]}
+                  cellProblems={spec.kind === 'rows' ? problems : undefined}
+                  onSet={inputs.set}
                 />
               );
             })}
@@ -41,34 +44,41 @@ export function CalculatorForm({ calculator, inputs, problems }: CalculatorFormP
   );
 }
 
-interface FieldProps extends CalculatorFormProps {
+interface FieldProps {
+  calculator: string;
   name: string;
   spec: FieldSpec;
+  value: RawValue;
+  problem: string | undefined;
+  /** Of a table: what is wrong in its cells. */
+  cellProblems: Problems | undefined;
+  onSet: Inputs['set'];
 }
 
-function Field({ calculator, name, spec, inputs, problems }: FieldProps) {
+/** One field; drawn anew only when something of its own changed, since a calculator draws on every keystroke. */
+const Field = memo(function Field(props: FieldProps) {
+  const { calculator, name, spec, value, problem, cellProblems, onSet } = props;
   const { t, i18n } = useTranslation('calculators');
-  const value = inputs.raw[name] ?? '';
   if (spec.kind === 'rows') {
     return (
       <RowsInput
-        calculator={calculator.name}
+        calculator={calculator}
         field={name}
         spec={spec}
         rows={typeof value === 'string' ? [] : value}
-        problems={problems}
-        onChange={(rows) => inputs.set(name, rows)}
+        problems={cellProblems ?? {}}
+        onChange={(rows) => onSet(name, rows)}
       />
     );
   }
-  const hintKey = `${calculator.name}.hints.${name}`;
+  const hintKey = `${calculator}.hints.${name}`;
   const shared = {
     name,
-    label: t(`${calculator.name}.fields.${name}`),
+    label: t(`${calculator}.fields.${name}`),
     hint: i18n.exists(hintKey, { ns: 'calculators' }) ? t(hintKey) : undefined,
-    error: said(problems[name], t),
+    error: said(problem, t),
     text: typeof value === 'string' ? value : '',
-    onChange: (text: string) => inputs.set(name, text),
+    onChange: (text: string) => onSet(name, text),
   };
   switch (spec.kind) {
     case 'number':
@@ -82,4 +92,4 @@ function Field({ calculator, name, spec, inputs, problems }: FieldProps) {
     case 'switch':
       return <SwitchInput {...shared} spec={spec} />;
   }
-}
+});

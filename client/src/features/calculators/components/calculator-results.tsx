@@ -10,6 +10,9 @@ import styles from './calculators.module.css';
 export function CalculatorResults({ name, result }: { name: string; result: Result }) {
   const { t } = useTranslation('calculators');
   const heading = (block: ResultBlock) => {
+    if (block.heading !== undefined) {
+      return block.heading.map((part) => (typeof part === 'string' ? part : t(part.word))).join(' · ');
+    }
     if (block.option !== undefined) return t(`options.${block.option.group}.${block.option.value}`);
     return block.name === undefined ? null : t(`${name}.blocks.${block.name}`);
   };

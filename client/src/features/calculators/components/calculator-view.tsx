@@ -1,9 +1,9 @@
 import { Button, Heading, Text } from '@radix-ui/themes';
-import { useMemo, useState, type ReactNode } from 'react';
+import { memo, useDeferredValue, useMemo, useState, type ReactNode } from 'react';
 import { useTranslation } from 'react-i18next';
 import { useAnnounce } from '../../../components/announcer.tsx';
 import type { Calculator } from '../calculator.ts';
-import { evaluate } from '../evaluate.ts';
+import { evaluate, type Evaluated } from '../evaluate.ts';
 import { useInputsInAddress } from '../hooks/use-inputs-in-address.ts';
 import { CalculatorForm } from './calculator-form.tsx';
 import { Cautions, Sources } from './calculator-notes.tsx';
@@ -11,15 +11,23 @@ import { CalculatorResults } from './calculator-results.tsx';
 import styles from './calculators.module.css';
 
 /** One calculator: its fields, and beside them the drawing, the results with their working, sources and cautions. */
-export function CalculatorView({ calculator }: { calculator: Calculator }) {
+export function CalculatorView({
+  calculator,
+  isSheet = false,
+}: {
+  calculator: Calculator;
+  /** Printed, what was typed stays away: the results say it again. */
+  isSheet?: boolean;
+}) {
   const { t } = useTranslation('calculators');
   const inputs = useInputsInAddress(calculator.fields);
-  const evaluated = useMemo(() => evaluate(calculator, inputs.raw), [calculator, inputs.raw]);
-  const { result, values, problems, refused } = evaluated;
+  // The keystroke shows at once; what follows from it may come a moment later.
+  const raw = useDeferredValue(inputs.raw);
+  const evaluated = useMemo(() => evaluate(calculator, raw), [calculator, raw]);
   return (
     <div className={styles.view}>
-      <div className={styles.inputs}>
-        <CalculatorForm calculator={calculator} inputs={inputs} problems={problems} />
+      <div className={`${styles.inputs} ${isSheet ? 'k-no-print' : ''}`}>
+        <CalculatorForm calculator={calculator} inputs={inputs} problems={evaluated.problems} />
         <div className={styles.actions}>
           <SendButton address={inputs.address} />
           {inputs.isChanged && (
@@ -29,24 +37,39 @@ export function CalculatorView({ calculator }: { calculator: Calculator }) {
           )}
         </div>
       </div>
-      <section className={styles.found} aria-labelledby="found">
-        <Heading as="h2" size="4" weight="medium" id="found">
-          {t('found')}
-        </Heading>
-        {result === null ? (
-          <NothingFound count={Object.keys(problems).length} refused={refused} />
-        ) : (
-          <>
-            <Drawing>{calculator.draw?.(values as never)}</Drawing>
-            <CalculatorResults name={calculator.name} result={result} />
-          </>
-        )}
-        <Cautions calculator={calculator} result={result} />
-        {result !== null && <Sources result={result} />}
-      </section>
+      <Found calculator={calculator} evaluated={evaluated} />
     </div>
   );
 }
+
+/** Drawing, results, cautions and sources of what is typed. */
+const Found = memo(function Found({
+  calculator,
+  evaluated,
+}: {
+  calculator: Calculator;
+  evaluated: Evaluated;
+}) {
+  const { t } = useTranslation('calculators');
+  const { result, values, problems, refused } = evaluated;
+  return (
+    <section className={styles.found} aria-labelledby="found">
+      <Heading as="h2" size="4" weight="medium" id="found">
+        {t('found')}
+      </Heading>
+      {result === null ? (
+        <NothingFound count={Object.keys(problems).length} refused={refused} />
+      ) : (
+        <>
+          <Drawing>{calculator.draw?.(values as never)}</Drawing>
+          <CalculatorResults name={calculator.name} result={result} />
+        </>
+      )}
+      <Cautions calculator={calculator} result={result} />
+      {result !== null && <Sources result={result} />}
+    </section>
+  );
+});
 
 function Drawing({ children }: { children: ReactNode }) {
   return children === undefined ? null : <div className={styles.drawing}>{children}</div>;

@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { useCallback, useEffect, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import type { FieldSpecs, RawValue, RawValues } from '../calculator.ts';
 import { initialValues, isInAddress, readAddress, writeAddress } from '../inputs.ts';
@@ -40,7 +40,9 @@ export function useInputsInAddress(fields: FieldSpecs): Inputs {
 
   useEffect(() => {
     const next = isChanged ? writeAddress(fields, raw, search) : without(search, Object.keys(fields));
-    if (next.toString() === search.toString()) return undefined;
+    // An address that says the same in fewer words stays as it was sent.
+    const now = isChanged ? writeAddress(fields, readAddress(fields, search), search) : search;
+    if (next.toString() === now.toString()) return undefined;
     const timer = setTimeout(() => {
       setWritten(next.toString());
       setSearch(next, { replace: true, preventScrollReset: true });
@@ -48,13 +50,15 @@ export function useInputsInAddress(fields: FieldSpecs): Inputs {
     return () => clearTimeout(timer);
   }, [fields, raw, isChanged, search, setSearch]);
 
+  const set = useCallback((field: string, value: RawValue) => {
+    setChanged(true);
+    setRaw((before) => ({ ...before, [field]: value }));
+  }, []);
+
   return {
     raw,
     isChanged,
-    set: (field, value) => {
-      setChanged(true);
-      setRaw((before) => ({ ...before, [field]: value }));
-    },
+    set,
     reset: () => {
       setChanged(false);
       setRaw(initialValues(fields));
