@@ -10,6 +10,7 @@ import type { Audience } from '../lib/feature-route.ts';
 export function mayOpen(me: MeView | null, audience: Audience): boolean {
   if (audience === 'anyone') return true;
   if (me === null) return false;
+  if (audience === 'signed_in') return true;
   if (audience === 'staff') return me.user.isStaff;
   if (me.company === null) return false;
   return audience === 'company' || me.company.kind === audience;

@@ -1,5 +1,6 @@
 import { errorFromBody, isApiError, offlineError, type ApiError } from './api-error.ts';
 import { deviceMs, syncClock } from './clock.ts';
+import { confirmGate, proofAskedBy } from './confirm-gate.ts';
 import { sessionGate } from './session-gate.ts';
 import { readStored, writeStored } from './storage.ts';
 
@@ -31,7 +32,20 @@ export const api = {
 };
 
 function request<T>(method: Method, path: string, body: unknown, options: RequestOptions = {}): Promise<T> {
-  return withSession(() => send<T>(method, path, body, options), options.whenSignedOut);
+  const attempt = () => withSession(() => send<T>(method, path, body, options), options.whenSignedOut);
+  return method === 'GET' ? attempt() : withConfirmation(attempt);
+}
+
+/** A sensitive act may ask who one still is: in place, and then the same request goes on. */
+async function withConfirmation<T>(attempt: () => Promise<T>): Promise<T> {
+  try {
+    return await attempt();
+  } catch (error) {
+    const proof = proofAskedBy(error);
+    if (proof === null) throw error;
+    await confirmGate.ask(proof).catch(() => Promise.reject(error as ApiError));
+    return attempt();
+  }
 }
 
 /**

@@ -1,8 +1,9 @@
 import type { ComponentType } from 'react';
 import type { LoaderFunction } from 'react-router-dom';
 
-/** Who may open a page: a kind of company, any company, staff, or anyone at all (signed out too). */
-export type Audience = 'general_contractor' | 'cutting_contractor' | 'company' | 'staff' | 'anyone';
+/** Who may open a page: a kind of company, any company, staff, whoever is signed in, or anyone at all (signed out too). */
+export type Audience =
+  'general_contractor' | 'cutting_contractor' | 'company' | 'staff' | 'signed_in' | 'anyone';
 
 /** What the file of a page exports: the page as default, and what it wants loaded before it shows. */
 export interface PageModule {

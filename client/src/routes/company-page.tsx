@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useEffect } from 'react';
 import { useTranslation } from 'react-i18next';
 import { useSearchParams } from 'react-router-dom';
+import { ButtonLink } from '../components/link.tsx';
 import { Page } from '../components/page.tsx';
 import { Loading, QueryErrorState } from '../components/states.tsx';
 import { companyKeys, companyQuery, useReadPayouts } from '../features/company/api/company.queries.ts';
@@ -13,6 +14,7 @@ import { RateCardLink } from '../features/company/components/rate-card-link.tsx'
 import { Units } from '../features/company/components/units.tsx';
 import { useCan } from '../features/session/hooks/use-session.ts';
 import { useLiveHints } from '../lib/live.ts';
+import { paths } from '../lib/paths.ts';
 import { queryClient } from '../lib/query-client.ts';
 
 export function loader() {
@@ -46,7 +48,15 @@ export default function CompanyPage() {
   const canEdit = can('company.edit');
   const isCrew = own.kind === 'cutting_contractor';
   return (
-    <Page title={t('title')} lead={t(`kind.${own.kind}`)}>
+    <Page
+      title={t('title')}
+      lead={t(`kind.${own.kind}`)}
+      actions={
+        <ButtonLink to={paths.people} variant="soft" size="3">
+          {t('people')}
+        </ButtonLink>
+      }
+    >
       <div className={styles.columns}>
         <div className={styles.column}>
           <CompanyForm company={own} canEdit={canEdit} />

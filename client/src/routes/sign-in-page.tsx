@@ -29,7 +29,10 @@ export default function SignInPage() {
       <div className="k-panel" style={{ maxWidth: '26rem' }}>
         <SignInForm onSignedIn={signedIn} />
       </div>
-      <Text as="p" mt="4" color="gray">
+      <Text as="p" mt="4">
+        <TextLink to={paths.reset}>{t('signInPage.forgot')}</TextLink>
+      </Text>
+      <Text as="p" mt="2" color="gray">
         {t('signInPage.noAccount')} <TextLink to={paths.signUp()}>{t('signInPage.signUp')}</TextLink>
       </Text>
     </Page>

@@ -38,6 +38,11 @@ export const authenticatorCodeSchema = z
 export const setSecondFactorSchema = z.strictObject({ code: authenticatorCodeSchema });
 export type SetSecondFactor = z.infer<typeof setSecondFactorSchema>;
 
+export const confirmWithPasswordSchema = z.strictObject({
+  password: z.string().min(1, 'Your password').max(128),
+});
+export const confirmWithCodeSchema = z.strictObject({ code: secondFactorCodeSchema });
+
 /** Says again who one is, before a sensitive act: by password, or by code where there is a second factor. */
 export const confirmSchema = z
   .strictObject({

@@ -2,6 +2,7 @@ import { Suspense } from 'react';
 import { useTranslation } from 'react-i18next';
 import { Outlet, ScrollRestoration, useNavigation } from 'react-router-dom';
 import { OfflineBanner } from '../../components/offline-banner.tsx';
+import { ConfirmYou } from '../../features/session/components/confirm-you.tsx';
 import { SignInAgain } from '../../features/session/components/sign-in-again.tsx';
 import { FirstPaint } from '../first-paint.tsx';
 import styles from './root-layout.module.css';
@@ -21,6 +22,7 @@ export function RootLayout() {
         <Outlet />
       </Suspense>
       <SignInAgain />
+      <ConfirmYou />
       <ScrollRestoration />
     </>
   );

@@ -7,6 +7,7 @@ import { AppShell, type NavItem } from '../../components/app-shell.tsx';
 import { LineStateMark } from '../../components/line-state.tsx';
 import { meQuery } from '../../features/session/api/session.queries.ts';
 import { AccountMenu } from '../../features/session/components/account-menu.tsx';
+import { SessionEnding } from '../../features/session/components/session-ending.tsx';
 import { TalkLink } from '../../features/talk/components/talk-link.tsx';
 import { refetchAfterGaps, useLine } from '../../lib/live.ts';
 import { homeOf, paths } from '../../lib/paths.ts';
@@ -53,6 +54,7 @@ export function SignedInLayout() {
       }
     >
       <Outlet />
+      <SessionEnding />
     </AppShell>
   );
 }

@@ -1,10 +1,10 @@
-import type { MeView, SignIn, SignUp } from '@kerfyard/common/people';
+import type { Confirm, MeView, SessionEndView, SignIn, SignUp } from '@kerfyard/common/people';
 import { queryOptions } from '@tanstack/react-query';
 import { api } from '../../../lib/api-client.ts';
 import { isApiError } from '../../../lib/api-error.ts';
 import { sessionGate } from '../../../lib/session-gate.ts';
 
-export const sessionKeys = { me: ['session', 'me'] as const };
+export const sessionKeys = { me: ['session', 'me'] as const, end: ['session', 'end'] as const };
 
 /** Who is signed in; null when nobody is. */
 export const meQuery = queryOptions({
@@ -38,3 +38,13 @@ export const postSignIn = (body: SignIn) =>
   api.post<MeView>('/api/auth/sign-in', body, { whenSignedOut: 'throw' });
 
 export const postSignOut = () => api.post<void>('/api/auth/sign-out', undefined, { whenSignedOut: 'throw' });
+
+/** Says again who one is; what waited goes on afterwards. */
+export const postConfirm = (body: Confirm) => api.post<void>('/api/account/confirm', body);
+
+/** Until when the session lasts unless it is used. */
+export const sessionEndQuery = queryOptions({
+  queryKey: sessionKeys.end,
+  staleTime: Infinity,
+  queryFn: ({ signal }) => api.get<SessionEndView>('/api/account/session', { signal }),
+});

@@ -42,6 +42,9 @@ export default function AccountMenuOpened({ me }: { me: MeView }) {
           ))}
         </DropdownMenu.RadioGroup>
         <DropdownMenu.Separator />
+        <DropdownMenu.Item onSelect={() => void navigate(paths.account)}>
+          {t('account.own')}
+        </DropdownMenu.Item>
         <DropdownMenu.Item onSelect={() => void navigate(paths.calculators)}>
           {t('calculators')}
         </DropdownMenu.Item>

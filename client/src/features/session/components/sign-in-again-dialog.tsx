@@ -1,10 +1,12 @@
 import type { MeView } from '@kerfyard/common/people';
 import { Button, Dialog } from '@radix-ui/themes';
+import { useQueryClient } from '@tanstack/react-query';
 import { useTranslation } from 'react-i18next';
 import { useNavigate } from 'react-router-dom';
 import { paths } from '../../../lib/paths.ts';
 import { sessionGate } from '../../../lib/session-gate.ts';
 import { line } from '../../../lib/socket.ts';
+import { sessionKeys } from '../api/session.queries.ts';
 import { useBecome } from '../hooks/use-session.ts';
 import { SignInForm } from './sign-in-form.tsx';
 
@@ -13,6 +15,7 @@ export default function SignInAgainDialog() {
   const { t } = useTranslation();
   const navigate = useNavigate();
   const become = useBecome();
+  const client = useQueryClient();
   const before = sessionGate.known();
 
   const signedIn = (me: MeView) => {
@@ -25,6 +28,7 @@ export default function SignInAgainDialog() {
     }
     sessionGate.know({ userId: me.user.id, email: me.user.email });
     sessionGate.answer(true);
+    void client.invalidateQueries({ queryKey: sessionKeys.end });
     // The live line may have given up with the session; when it has not, this does nothing.
     void line.connect();
   };
