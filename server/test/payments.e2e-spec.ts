@@ -194,6 +194,10 @@ describe('releasing', () => {
 
     const gc = await statement(work, 'gc');
     expect(gc.totals).toMatchObject({ setAsideCents: 1_000_001, heldCents: 0, releasedCents: 1_000_001 });
+    // Two lines of the schedule of values, released by one entry.
+    expect(gc.lines.filter((line) => line.kind === 'released').map((line) => line.cents)).toEqual([
+      -1_000_001,
+    ]);
     const crew = await statement(work, 'crew');
     expect(crew.totals).toMatchObject({ transferredCents: 950_001, payableCents: 0, feesCents: 50_000 });
 

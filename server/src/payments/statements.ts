@@ -48,7 +48,7 @@ export class Statements {
     if (actor.company === null) throw new AppError('forbidden');
     const side: Side = actor.company.kind === 'general_contractor' ? 'gc' : 'crew';
     const rows = await this.uow.rows<PostingRow>(null, STATEMENT_LINES, [actor.company.id, subcontractId]);
-    return { side, lines: rows.flatMap((row) => readLine(side, row)), totals: totalsOf(rows) };
+    return { side, lines: perEntry(rows.flatMap((row) => readLine(side, row))), totals: totalsOf(rows) };
   }
 }
 
@@ -67,6 +67,17 @@ function readLine(side: Side, row: PostingRow): StatementLine[] {
       cents: reading.sign * Number(row.amount_cents),
     },
   ];
+}
+
+/** One line per entry and kind: an entry moves each line of the schedule of values by a posting of its own. */
+function perEntry(lines: StatementLine[]): StatementLine[] {
+  const merged = new Map<string, StatementLine>();
+  for (const line of lines) {
+    const key = `${line.entryId} ${line.kind}`;
+    const before = merged.get(key);
+    merged.set(key, before === undefined ? line : { ...before, cents: before.cents + line.cents });
+  }
+  return [...merged.values()];
 }
 
 /** Sums over postings, credits positive: each equals the balance, or the one-way movement, of its ledger account. */
