@@ -17,6 +17,8 @@ interface ConfirmDialogProps {
   destructive?: boolean;
   /** Not now: the line is down, or a choice is missing. */
   disabled?: boolean;
+  /** Asked when it is about to open: false keeps it closed, and the page says why. */
+  mayOpen?: () => boolean;
   /** Closes when it resolves; an error is shown in place and may be tried again. */
   onConfirm: () => Promise<unknown>;
 }
@@ -30,7 +32,7 @@ export function ConfirmDialog(props: ConfirmDialogProps) {
   const [failure, setFailure] = useState<{ error: unknown } | null>(null);
 
   const change = (next: boolean) => {
-    if (busy) return;
+    if (busy || (next && props.mayOpen?.() === false)) return;
     setFailure(null);
     setOpen(next);
   };

@@ -38,7 +38,7 @@ export function readCutList(cuts: readonly CutLine[]): CutListReading {
       return;
     }
     byCutId.set(line.id, takeoff);
-    addTakeoff(totals, takeoff, line.cut.count);
+    addTakeoff(totals, takeoff);
   });
   return issues.length === 0 ? { ok: true, totals, byCutId } : { ok: false, issues };
 }
@@ -59,7 +59,14 @@ function fieldOfCut({ cut }: CutLine, field: string): string {
   return cut.kind === 'joints' && field === 'maxAspect' ? 'widthFt' : field;
 }
 
-function addTakeoff(totals: ScopeTotals, takeoff: CutTakeoff, count: number): void {
+/** Sums of cuts that have been taken off already. */
+export function sumTakeoffs(takeoffs: readonly CutTakeoff[]): ScopeTotals {
+  const totals = { ...noTotals };
+  for (const takeoff of takeoffs) addTakeoff(totals, takeoff);
+  return totals;
+}
+
+function addTakeoff(totals: ScopeTotals, takeoff: CutTakeoff): void {
   totals.sawFt += takeoff.sawFt;
   totals.overcutFt += takeoff.overcutFt;
   totals.inchFeet += takeoff.inchFeet;
@@ -71,5 +78,5 @@ function addTakeoff(totals: ScopeTotals, takeoff: CutTakeoff, count: number): vo
   totals.removedCuFt += takeoff.removedCuFt;
   totals.removedLb += takeoff.removedLb;
   // `pieces` of a takeoff describes one opening.
-  totals.pieces += (takeoff.pieces?.count ?? 0) * count;
+  totals.pieces += (takeoff.pieces?.count ?? 0) * takeoff.count;
 }

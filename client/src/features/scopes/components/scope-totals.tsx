@@ -20,9 +20,18 @@ const figures = [
 const SHOWN_LINES = 30;
 
 /** A cut list's sums, those that are not zero; each opens to what every cut adds to it. */
-export function ScopeTotals({ totals, cuts }: { totals: Totals; cuts: readonly CutLine[] }) {
+export function ScopeTotals(props: {
+  totals: Totals;
+  cuts: readonly CutLine[];
+  /** Of the cuts in their order, where they are known already. */
+  takeoffs?: readonly CutTakeoff[];
+}) {
+  const { totals, cuts, takeoffs: known } = props;
   const { t } = useTranslation('scope');
-  const takeoffs = useMemo(() => takeoffCutList({ cuts: cuts.map((line) => line.cut) }).cuts, [cuts]);
+  const takeoffs = useMemo(
+    () => known ?? takeoffCutList({ cuts: cuts.map((line) => line.cut) }).cuts,
+    [known, cuts],
+  );
   return (
     <dl className={styles.totals}>
       {figures
@@ -34,6 +43,7 @@ export function ScopeTotals({ totals, cuts }: { totals: Totals; cuts: readonly C
               <Figure
                 label={t(`totals.${key}`)}
                 value={totals[key]}
+                digits={unit === 'lb' ? 0 : 1}
                 unit={unit}
                 size="large"
                 working={sumOf(t(`totals.${key}`), unit, totals[key], partsOf(key, cuts, takeoffs))}

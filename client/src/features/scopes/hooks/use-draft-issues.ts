@@ -16,27 +16,30 @@ export function useDraftIssues(
   draft: ScopeDraft,
 ): {
   shown: SortedIssues;
-  isWhole: boolean;
-  /** Show everything that is wrong. */
-  reveal: () => void;
+  /** Look the newest draft over: whether it may be published. If not, everything that is wrong is shown. */
+  inspect: (newest: ScopeDraft) => boolean;
   /** Complaints only the server has; they stand until something is changed. */
   fromServer: (issues: readonly FieldIssue[]) => void;
 } {
   const [isRevealed, setRevealed] = useState(false);
   const [server, setServer] = useState<{ draft: ScopeDraft; issues: readonly FieldIssue[] } | null>(null);
-  const check = useMemo(() => checkDraft(draft, now()), [draft]);
   const shown = useMemo(() => {
     if (!isRevealed) return noIssues;
+    const check = checkDraft(draft, now());
     const own = check.ok ? [] : check.issues;
     return sortIssues(server?.draft === draft ? [...server.issues, ...own] : own);
-  }, [isRevealed, check, server, draft]);
+  }, [isRevealed, server, draft]);
   useEffect(() => {
     form.clearErrors();
     for (const { path, message } of shown.fields) {
       form.setError(path as FieldPath<ScopeFormValues>, { type: 'draft', message });
     }
   }, [form, shown]);
-  const reveal = useCallback(() => setRevealed(true), []);
+  const inspect = useCallback((newest: ScopeDraft) => {
+    const { ok } = checkDraft(newest, now());
+    if (!ok) setRevealed(true);
+    return ok;
+  }, []);
   const fromServer = useCallback(
     (issues: readonly FieldIssue[]) => {
       setRevealed(true);
@@ -44,5 +47,5 @@ export function useDraftIssues(
     },
     [draft],
   );
-  return { shown, isWhole: check.ok, reveal, fromServer };
+  return { shown, inspect, fromServer };
 }

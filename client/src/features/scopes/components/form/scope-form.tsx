@@ -50,7 +50,7 @@ export function ScopeForm({ scope, onReload }: { scope: DraftScope; onReload: ()
   // What is only shown follows the typing a moment behind when the list is long.
   const settled = useDeferredValue(typed);
   const settledLines = useDeferredValue(lines);
-  const { shown, isWhole, reveal, fromServer } = useDraftIssues(form, settled);
+  const { shown, inspect, fromServer } = useDraftIssues(form, settled);
   const labels = useLabels();
   const summary = useSummaryLines(shown.all, labels.texts, lines);
   const [reveals, setReveals] = useState(0);
@@ -78,16 +78,16 @@ export function ScopeForm({ scope, onReload }: { scope: DraftScope; onReload: ()
           <Sections scope={scope} lines={lines} settledLines={settledLines} change={change} shown={shown} />
           <PublishBar
             state={state}
-            isWhole={isWhole}
             mayPublish={can('scope.write')}
             due={{
               at: values.bidding.dueAt,
               timeZone: values.site.timeZone === '' ? 'UTC' : values.site.timeZone,
               mode: values.bidding.mode,
             }}
-            onReveal={() => {
-              reveal();
-              setReveals((count) => count + 1);
+            mayAsk={() => {
+              const isWhole = inspect(typed);
+              if (!isWhole) setReveals((count) => count + 1);
+              return isWhole;
             }}
             onPublish={publish}
           />
