@@ -12,6 +12,8 @@ function at(change: object): SubcontractView {
     sov: [line('set_aside')],
     visits: [],
     completions: [],
+    releases: [],
+    payoutsReady: true,
   };
   return { ...work, ...change } as unknown as SubcontractView;
 }
@@ -50,6 +52,16 @@ const cases: [string, object, Next | null][] = [
   ['accepted', { side: 'crew', completions: [{ status: 'accepted' }] }, { step: 'release', isOurs: false }],
   ['a visit finished whose lines are paid', { sov: [line('released')], visits: [visit('finished')] }, null],
   ['completed', { status: 'completed' }, null],
+  [
+    'completed, the crew not set up to be paid',
+    { status: 'completed', side: 'crew', payoutsReady: false, releases: [{ status: 'blocked' }] },
+    { step: 'payouts', isOurs: true },
+  ],
+  [
+    'the same, as the general contractor',
+    { status: 'completed', payoutsReady: false, releases: [{ status: 'blocked' }] },
+    null,
+  ],
   ['lapsed', { status: 'lapsed' }, null],
 ];
 

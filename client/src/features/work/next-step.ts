@@ -2,7 +2,16 @@ import type { SubcontractView } from '@kerfyard/common/subcontracts';
 
 /** What one side can do now. */
 export type Step =
-  'sign' | 'setAside' | 'propose' | 'confirm' | 'start' | 'finish' | 'complete' | 'accept' | 'release';
+  | 'sign'
+  | 'setAside'
+  | 'propose'
+  | 'confirm'
+  | 'start'
+  | 'finish'
+  | 'complete'
+  | 'accept'
+  | 'release'
+  | 'payouts';
 
 export interface Next {
   step: Step;
@@ -20,6 +29,7 @@ const doneBy: Record<Step, SubcontractView['side'] | 'either'> = {
   complete: 'crew',
   accept: 'gc',
   release: 'gc',
+  payouts: 'crew',
 };
 
 /** The next move of a subcontract, the latest stage first; null when nothing is to be done. */
@@ -28,9 +38,15 @@ export function nextOf(subcontract: SubcontractView): Next | null {
   if (status === 'awaiting_signatures') {
     return { step: 'sign', isOurs: !signatures.some((signature) => signature.side === side) };
   }
+  if (lacksPayouts(subcontract)) return { step: 'payouts', isOurs: true };
   if (status !== 'active') return null;
   const step = activeStep(subcontract);
   return step === null ? null : { step, isOurs: doneBy[step] === side };
+}
+
+/** Released money waits for the crew's account at the provider: nobody's business but the crew's. */
+function lacksPayouts({ side, payoutsReady, releases }: SubcontractView): boolean {
+  return side === 'crew' && !payoutsReady && releases.some((release) => release.status === 'blocked');
 }
 
 function activeStep({ side, sov, visits, completions }: SubcontractView): Step | null {

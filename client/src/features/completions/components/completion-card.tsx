@@ -7,7 +7,7 @@ import { FileThumbs } from '../../../components/file-thumb.tsx';
 import { MoneyText } from '../../../components/money-text.tsx';
 import { QueryErrorState } from '../../../components/states.tsx';
 import { StatusWord, type StatusTone } from '../../../components/status-word.tsx';
-import { formatDateTime, formatMoney, formatNumber } from '../../../lib/format.ts';
+import { formatDateTime, formatMoney, formatNumber, formatPercent } from '../../../lib/format.ts';
 import { useIsLive } from '../../../lib/live.ts';
 import { useFormId } from '../../../lib/use-form-id.ts';
 import { useRelease } from '../../money/api/money.queries.ts';
@@ -133,6 +133,7 @@ function Accepted({ completion, subcontract }: { completion: CompletionView; sub
   const form = useFormId();
   const release = useRelease(subcontract.id);
   const amount = formatMoney(completion.amountCents);
+  const retained = subcontract.retainageBasisPoints / 10_000;
   if (!can('money.release')) return <Text size="2">{t('card.waitsForRelease')}</Text>;
   return (
     <div>
@@ -143,7 +144,9 @@ function Accepted({ completion, subcontract }: { completion: CompletionView; sub
           </Button>
         }
         title={t('card.releaseTitle', { amount, crew: subcontract.crew.name })}
-        text={t('card.releaseText')}
+        text={t(retained > 0 ? 'card.releaseTextRetainage' : 'card.releaseText', {
+          percent: formatPercent(retained, 1),
+        })}
         confirm={t('card.release', { amount })}
         disabled={!isLive}
         onConfirm={() => release.mutateAsync({ id: form.id, completionId: completion.id })}

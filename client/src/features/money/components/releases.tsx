@@ -5,7 +5,7 @@ import { useTranslation } from 'react-i18next';
 import { ConfirmDialog } from '../../../components/confirm-dialog.tsx';
 import { MoneyText } from '../../../components/money-text.tsx';
 import { StatusWord, type StatusTone } from '../../../components/status-word.tsx';
-import { formatDateTime, formatMoney } from '../../../lib/format.ts';
+import { formatDateTime, formatMoney, formatPercent } from '../../../lib/format.ts';
 import { useIsLive } from '../../../lib/live.ts';
 import { useFormId } from '../../../lib/use-form-id.ts';
 import { useRelease } from '../api/money.queries.ts';
@@ -49,6 +49,7 @@ function AcceptedCompletion(props: {
   const form = useFormId();
   const release = useRelease(props.subcontract.id);
   const amount = formatMoney(props.amountCents);
+  const retained = props.subcontract.retainageBasisPoints / 10_000;
   return (
     <section className={styles.item} aria-label={t('accepted.title')}>
       <Heading as="h2" size="4" weight="medium">
@@ -64,7 +65,9 @@ function AcceptedCompletion(props: {
               </Button>
             }
             title={t('accepted.confirmTitle', { amount, crew: props.subcontract.crew.name })}
-            text={t('accepted.confirmText')}
+            text={t(retained > 0 ? 'accepted.confirmTextRetainage' : 'accepted.confirmText', {
+              percent: formatPercent(retained, 1),
+            })}
             confirm={t('accepted.press', { amount })}
             disabled={!isLive}
             onConfirm={() => release.mutateAsync({ id: form.id, completionId: props.completionId })}

@@ -6,7 +6,7 @@ import { paths } from '../../../lib/paths.ts';
 import { nextOf, type Step } from '../next-step.ts';
 import styles from './work.module.css';
 
-const places: Record<Exclude<Step, 'setAside'>, string> = {
+const places: Record<Exclude<Step, 'setAside' | 'payouts'>, string> = {
   sign: 'paper',
   propose: 'visits',
   confirm: 'visits',
@@ -32,16 +32,24 @@ export function NextStep({ subcontract }: { subcontract: SubcontractView }) {
         </Text>
         {t(`next.${isOurs ? 'ours' : 'wait'}.${step}`, { name: other.name })}
       </Text>
-      {isOurs && step === 'setAside' && (
-        <ButtonLink to={paths.workMoney(subcontract.id)} size="3">
-          {t('next.go.setAside')}
-        </ButtonLink>
-      )}
-      {isOurs && step !== 'setAside' && (
-        <Button asChild size="3" variant="soft">
-          <a href={`#${places[step]}`}>{t(`next.go.${step}`)}</a>
-        </Button>
-      )}
+      {isOurs && <Way step={step} subcontractId={subcontract.id} />}
     </div>
+  );
+}
+
+function Way({ step, subcontractId }: { step: Step; subcontractId: string }) {
+  const { t } = useTranslation('work');
+  const words = t(`next.go.${step}`);
+  if (step === 'setAside' || step === 'payouts') {
+    return (
+      <ButtonLink to={step === 'setAside' ? paths.workMoney(subcontractId) : paths.company} size="3">
+        {words}
+      </ButtonLink>
+    );
+  }
+  return (
+    <Button asChild size="3" variant="soft">
+      <a href={`#${places[step]}`}>{words}</a>
+    </Button>
   );
 }
