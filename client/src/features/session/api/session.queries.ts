@@ -6,18 +6,25 @@ import { sessionGate } from '../../../lib/session-gate.ts';
 
 export const sessionKeys = { me: ['session', 'me'] as const, end: ['session', 'end'] as const };
 
-/** Who is signed in; null when nobody is. */
+/**
+ * Who is signed in; null when nobody is. Whoever was signed in on this page is asked to sign in again: with a null the
+ * page would go, and what is typed on it too.
+ */
 export const meQuery = queryOptions({
   queryKey: sessionKeys.me,
   staleTime: Infinity,
   meta: { live: true },
   queryFn: async ({ signal }): Promise<MeView | null> => {
+    const wasSignedIn = sessionGate.known() !== null;
     try {
-      const me = await api.get<MeView>('/api/auth/me', { signal, whenSignedOut: 'throw' });
+      const me = await api.get<MeView>('/api/auth/me', {
+        signal,
+        whenSignedOut: wasSignedIn ? 'ask' : 'throw',
+      });
       remember(me);
       return me;
     } catch (error) {
-      if (!isApiError(error, 'unauthenticated')) throw error;
+      if (wasSignedIn || !isApiError(error, 'unauthenticated')) throw error;
       sessionGate.know(null);
       return null;
     }

@@ -1,4 +1,5 @@
 import type { MeView } from '@kerfyard/common/people';
+import { QueryClient } from '@tanstack/react-query';
 import { screen, waitFor } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { useState } from 'react';
@@ -7,6 +8,7 @@ import { api } from '../../../lib/api-client.ts';
 import { sessionGate } from '../../../lib/session-gate.ts';
 import { answerRequests, problem } from '../../../test/answers.ts';
 import { renderInApp } from '../../../test/render.tsx';
+import { meQuery } from '../api/session.queries.ts';
 import { SignInAgain } from './sign-in-again.tsx';
 
 // The line reopens after the sign-in; here nothing listens at the other end.
@@ -72,6 +74,19 @@ it('asks over the page, keeps what was typed, and goes on with the same request'
   expect(screen.queryByRole('dialog')).toBeNull();
   expect(screen.getByLabelText('Note')).toHaveValue('typed before');
   expect(seen.at(-1)?.body).toEqual({ text: 'typed before' });
+});
+
+it('asks too when it was the page itself that asked who is signed in', async () => {
+  answerRequests({
+    'GET /api/auth/me': [() => problem(401, 'unauthenticated'), () => ({ status: 200, body: me('milo') })],
+    'POST /api/auth/refresh': () => problem(401, 'unauthenticated'),
+    'POST /api/auth/sign-in': () => ({ status: 200, body: me('milo') }),
+  });
+  renderInApp(<Page />);
+  const answer = new QueryClient().fetchQuery(meQuery);
+  await screen.findByRole('dialog', { name: 'Please sign in again' });
+  await userEvent.type(screen.getByLabelText('Password'), 'a slow wet saw at dawn{Enter}');
+  expect(await answer).toEqual(me('milo'));
 });
 
 it('says a wrong password in the dialog and stays', async () => {
