@@ -64,6 +64,7 @@ test('a sign-up says everything that is wrong at once', async ({ visit }) => {
 });
 
 test('a scope in the making loses nothing and says all that is missing', async ({ visit }) => {
+  test.setTimeout(90_000);
   const gc = await makeGeneralContractor();
   const visitor = await visit();
   const { page } = visitor;
@@ -122,6 +123,7 @@ test('a bid in the making loses nothing either', async ({ visit }) => {
     makeGeneralContractor(),
     makeCuttingContractor({ yard: { ...DENVER } }),
   ]);
+  test.setTimeout(90_000);
   const scope = await publishScope(gc, { site: { ...DENVER } });
   const visitor = await visit('phone');
   const { page } = visitor;
