@@ -18,7 +18,27 @@ export default defineConfig({
     strictPort: true,
     proxy: { '/api': api, '/socket.io': { target: api, ws: true } },
   },
-  build: { target: 'es2022', sourcemap: true, manifest: true },
+  build: {
+    target: 'es2022',
+    sourcemap: true,
+    manifest: true,
+    chunkSizeWarningLimit: 600,
+    // Few files before the first page shows: a phone's line pays its latency for every six of them.
+    rolldownOptions: {
+      output: {
+        codeSplitting: {
+          groups: [
+            { name: 'start', tags: ['$initial'], priority: 2 },
+            {
+              name: 'drawing',
+              test: /client.src.(components.(cut-sketch|figure|countdown|status-word)|lib.format)/,
+              priority: 1,
+            },
+          ],
+        },
+      },
+    },
+  },
   test: {
     name: 'client',
     environment: 'happy-dom',

@@ -28,7 +28,7 @@ const path = process.env.KERFYARD_PATH;
 const replayPath = process.env.KERFYARD_REPLAY;
 const MAX_STEPS = 30;
 
-jest.setTimeout(Math.max(240_000, HISTORIES * 3_000));
+jest.setTimeout(Math.max(600_000, HISTORIES * 3_000));
 
 let lab: MoneyLab;
 let money: MoneyServices;
