@@ -88,7 +88,7 @@ export function DataTable<Row>(props: DataTableProps<Row>) {
         </table>
       </div>
       {csvName !== undefined && rows.length > 0 && (
-        <Button type="button" variant="soft" color="gray" size="2" onClick={save}>
+        <Button type="button" variant="soft" color="gray" size="2" className="k-no-print" onClick={save}>
           {t('table.csv')}
         </Button>
       )}

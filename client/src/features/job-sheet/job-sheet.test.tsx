@@ -113,6 +113,17 @@ describe('the job sheet', () => {
     expect(Math.round(Number(figure(core, 'coreLb')?.value))).toBe(98);
   });
 
+  it('says no lift where nobody has said how the concrete comes out', () => {
+    const [trench] = cuts;
+    const whole = { ...trench!, cut: { ...trench!.cut, removal: undefined } } as CutLine;
+    const calculator = jobSheet({ cuts: [whole], conditions });
+    const { result } = evaluate(calculator, initialValues(calculator.fields));
+    const figures = result?.blocks.flatMap((block) => block.figures) ?? [];
+    // 40 × 2 ft × 6 in at 150 pcf.
+    expect(figures.find(({ name }) => name === 'uncutLb')?.value).toBe(6_000);
+    expect(figures.some(({ name }) => name === 'perLegLb')).toBe(false);
+  });
+
   it('is loud about what this place can do to people', () => {
     expect(sheet().calculator.cautions).toContain('carbon_monoxide');
     expect(sheet().calculator.cautions).not.toContain('tendon');

@@ -305,15 +305,23 @@ function liftBlocks(cuts: readonly SheetCut[], slings: Slings): readonly ResultB
 
 function pieceBlock(mark: string, takeoff: SheetCut['takeoff'], slings: Slings): ResultBlock {
   const { pieces, removedLb, count, working } = takeoff;
-  const pieceLb = pieces?.weightLb ?? removedLb / count;
-  const tension = slingTension({ loadLb: pieceLb, ...slings });
+  const heading = [mark, { word: 'jobSheet.pieces' }];
+  if (pieces === null) {
+    // Nobody has said how it comes out, so nothing is said about a lift.
+    const weights = working.filter(({ unit }) => unit === 'lb');
+    return {
+      heading,
+      figures: [{ name: 'uncutLb', value: removedLb, unit: 'lb', digits: 0, working: weights, isWide: true }],
+    };
+  }
+  const tension = slingTension({ loadLb: pieces.weightLb, ...slings });
   return {
-    heading: [mark, { word: 'jobSheet.pieces' }],
+    heading,
     figures: [
-      { name: 'pieces', value: (pieces?.count ?? 1) * count, unit: '' },
+      { name: 'pieces', value: pieces.count * count, unit: '' },
       {
         name: 'pieceLb',
-        value: pieceLb,
+        value: pieces.weightLb,
         unit: 'lb',
         digits: 0,
         working: working.filter(({ label, unit }) => label === 'Cross cuts of one' || unit === 'lb'),
