@@ -11,32 +11,40 @@ import { useLiveHints } from '../../../lib/live.ts';
 import { paths } from '../../../lib/paths.ts';
 import { addDays, dateIn, weekOf, type WeekDay } from '../../../lib/week.ts';
 import { visitKeys, visitsQuery } from '../api/visits.queries.ts';
+import { blocksBetween } from '../visit-blocks.ts';
+import { VisitList } from './visit-list.tsx';
 import { VisitStatusWord } from './visit-status.tsx';
 import styles from './visits.module.css';
 
-/** A week of visits: seven columns at the desk, a list on a phone. Which week stands in the address. */
+/** How far the list looks ahead, in weeks. */
+const LIST_WEEKS = 8;
+
+/** Visits as a week of seven columns, or as a list of the weeks to come. Which of them stands in the address. */
 export function Week() {
   const { t } = useTranslation('visits');
   const zone = deviceTimeZone();
   const [search, setSearch] = useSearchParams();
   const date = readDate(search.get('week')) ?? dateIn(now(), zone);
   const days = weekOf(date, zone);
-  const span = { from: days[0]?.startsAt ?? '', to: days[6]?.endsAt ?? '' };
+  const isList = search.get('visits') === 'list';
+  const lastDays = isList ? weekOf(addDays(date, 7 * (LIST_WEEKS - 1)), zone) : days;
+  const span = { from: days[0]?.startsAt ?? '', to: lastDays[6]?.endsAt ?? '' };
   const visits = useQuery(visitsQuery(span));
   useLiveHints({ visits: () => [visitKeys.all] });
-  const go = (to: string) =>
+  const set = (name: 'week' | 'visits', value: string) =>
     setSearch(
       (current) => {
-        current.set('week', to);
+        current.set(name, value);
         return current;
       },
       { replace: true },
     );
+  const go = (to: string) => set('week', to);
   return (
     <section aria-labelledby="week">
       <div className={styles.weekHead}>
         <Heading as="h2" size="5" weight="medium" id="week">
-          {t('week.title', { date: formatDate(days[0]?.date ?? date) })}
+          {t(isList ? 'week.listTitle' : 'week.title', { date: formatDate(days[0]?.date ?? date) })}
         </Heading>
         <div className={styles.row}>
           <Button variant="soft" color="gray" onClick={() => go(addDays(date, -7))}>
@@ -48,6 +56,9 @@ export function Week() {
           <Button variant="soft" color="gray" onClick={() => go(addDays(date, 7))}>
             {t('week.after')}
           </Button>
+          <Button variant="soft" onClick={() => set('visits', isList ? 'week' : 'list')}>
+            {t(isList ? 'week.asWeek' : 'week.asList')}
+          </Button>
         </div>
       </div>
       <Text as="p" size="2" color="gray" mb="3">
@@ -55,7 +66,8 @@ export function Week() {
       </Text>
       {visits.isPending && <Loading />}
       {visits.isError && <QueryErrorState error={visits.error} onRetry={() => void visits.refetch()} />}
-      {visits.data !== undefined && (
+      {visits.data !== undefined && isList && <VisitList visits={visits.data} span={span} zone={zone} />}
+      {visits.data !== undefined && !isList && (
         <div className={styles.week}>
           {days.map((day) => (
             <Day
@@ -84,7 +96,7 @@ function Day({
   zone: string;
 }) {
   const { t } = useTranslation('visits');
-  const blocks = blocksOf(day, visits);
+  const blocks = blocksBetween(day, visits);
   return (
     <div className={`${styles.day} ${isToday ? styles.today : ''} ${blocks.length === 0 ? styles.free : ''}`}>
       <Heading as="h3" size="2" weight="medium">
@@ -114,21 +126,6 @@ function Day({
       ))}
     </div>
   );
-}
-
-/** What stands on a day: confirmed windows, and for a proposal each window on offer. */
-function blocksOf(day: WeekDay, visits: readonly VisitView[]) {
-  return visits
-    .filter((visit) => visit.status !== 'cancelled')
-    .flatMap((visit) =>
-      (visit.window === null ? visit.windows : [visit.window]).map((window) => ({
-        visit,
-        ...window,
-        isOffer: visit.window === null,
-      })),
-    )
-    .filter((block) => block.startsAt < day.endsAt && block.endsAt > day.startsAt)
-    .sort((a, b) => (a.startsAt < b.startsAt ? -1 : 1));
 }
 
 function readDate(value: string | null): string | null {
