@@ -24,19 +24,19 @@ const maxNumbered = 12;
  * @throws CuttingInputError as the engine's `depthSection` does
  */
 export function DepthSection({ section: input }: { section: DepthSectionInput }) {
-  const { t } = useTranslation();
+  const { t } = useTranslation('drawings');
   const section = useMemo(() => depthSection(input), [input]);
   const { beyond } = section;
   const beyondLabel: DrawingLabel = {
     at: middleOf(beyond.box),
-    text: t(`drawing.${section.element === 'slab' ? 'below' : 'behind'}.${beyond.kind}`),
+    text: t(`${section.element === 'slab' ? 'below' : 'behind'}.${beyond.kind}`),
     side: 'centre',
     isLoud: beyond.loudness > 2,
   };
   return (
     <DrawingFrame
       box={section.box}
-      label={t('drawing.section')}
+      label={t('section')}
       text={section.text}
       showText
       labels={[...passLabels(section), beyondLabel]}

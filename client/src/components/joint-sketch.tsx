@@ -9,14 +9,14 @@ import { DrawingFrame, drawingStyles as styles } from './drawing-frame.tsx';
  * @throws CuttingInputError as `jointPlan` does
  */
 export function JointSketch({ slab }: { slab: JointPlanInput }) {
-  const { t } = useTranslation();
+  const { t } = useTranslation('drawings');
   const sketch = useMemo(() => jointSketch(slab), [slab]);
   const { box } = sketch;
-  const feet = (value: number) => t('drawing.feet', { feet: formatNumber(value, 2) });
+  const feet = (value: number) => t('feet', { feet: formatNumber(value, 2) });
   return (
     <DrawingFrame
       box={box}
-      label={t('drawing.joints')}
+      label={t('joints')}
       text={sketch.text}
       labels={[
         { at: { x: box.width / 2, y: 0 }, text: feet(box.width), side: 'above' },

@@ -9,15 +9,15 @@ import { DrawingFrame, drawingStyles as styles, type DrawingLabel } from './draw
  * @throws CuttingInputError as `trenchPlan` does
  */
 export function TrenchSection({ trench }: { trench: TrenchPlanInput }) {
-  const { t } = useTranslation();
+  const { t } = useTranslation('drawings');
   const section = useMemo(() => trenchSection(trench), [trench]);
   const places = dimensionPlaces(section);
   const labels: DrawingLabel[] = section.dimensions.map(({ name, fromIn, toIn }) => ({
     at: { x: places[name], y: (fromIn + toIn) / 2 },
-    text: t(`drawing.${name}`, { inches: formatNumber(toIn - fromIn, 2) }),
+    text: t(`${name}`, { inches: formatNumber(toIn - fromIn, 2) }),
   }));
   return (
-    <DrawingFrame box={section.box} label={t('drawing.trench')} text={section.text} labels={labels}>
+    <DrawingFrame box={section.box} label={t('trench')} text={section.text} labels={labels}>
       <TrenchShapes section={section} />
       {section.dimensions.map(({ name, fromIn, toIn }) => (
         <path

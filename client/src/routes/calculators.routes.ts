@@ -10,7 +10,7 @@ export const routes: readonly FeatureRoute[] = [
   {
     path: '/calculators/:calculator',
     audience: 'anyone',
-    words: ['calculators'],
+    words: ['calculators', 'drawings'],
     page: () => import('./calculator-page.tsx'),
   },
 ];

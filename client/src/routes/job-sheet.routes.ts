@@ -4,7 +4,7 @@ export const routes: readonly FeatureRoute[] = [
   {
     path: '/work/:subcontractId/job-sheet',
     audience: 'company',
-    words: ['calculators', 'scope'],
+    words: ['calculators', 'drawings', 'scope'],
     page: () => import('./job-sheet-page.tsx'),
   },
 ];

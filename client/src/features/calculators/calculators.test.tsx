@@ -15,7 +15,7 @@ vi.setConfig({ testTimeout: 20_000 });
 
 const calculators = new Map<CalculatorSlug, Calculator>();
 beforeAll(async () => {
-  await loadWords(['calculators']);
+  await loadWords(['calculators', 'drawings']);
   for (const slug of calculatorSlugs) calculators.set(slug, (await calculatorLoaders[slug]()).default);
 });
 

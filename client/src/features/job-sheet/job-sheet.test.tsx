@@ -13,7 +13,7 @@ import { jobSheet } from './job-sheet.tsx';
 // Finding fields by role and name is slow on a busy machine.
 vi.setConfig({ testTimeout: 20_000 });
 
-beforeAll(() => loadWords(['calculators']));
+beforeAll(() => loadWords(['calculators', 'drawings']));
 
 const conditions: Conditions = {
   element: 'slab_on_grade',
