@@ -35,7 +35,7 @@ export function TabulationTable({ view, bids, canPlug, onPlug, award }: Tabulati
         </Text>
       </div>
       {/* A wide table scrolls by itself; keyboards reach it because it takes the focus. */}
-      <div className={styles.scroll} tabIndex={0} role="region" aria-labelledby="tabulation">
+      <div className={styles.scroll} tabIndex={0} role="group" aria-labelledby="tabulation">
         <table className={styles.table}>
           <thead>
             <tr>
