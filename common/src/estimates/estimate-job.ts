@@ -192,7 +192,8 @@ function crewCost(hours: Spread, card: RateCard | null): Spread | null {
     hours.low === hours.high
       ? [costStep('low', 'Crew')]
       : [costStep('low', 'Crew, at best'), costStep('high', 'Crew, at worst')];
-  return { low: cost('low'), high: cost('high'), working };
+  // With the hours' own steps, so that it shows whose pace they rest on.
+  return { low: cost('low'), high: cost('high'), working: [...hours.working, ...working] };
 }
 
 function allCosts(crew: Spread | null, { bladeCents, bitCents }: ReturnType<typeof wearOf>): Spread | null {

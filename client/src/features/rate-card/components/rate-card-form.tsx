@@ -60,7 +60,7 @@ export function RateCardForm({ view, canEdit }: { view: RateCardView; canEdit: b
   };
   return (
     <Form form={form} onSubmit={send} label={t('title')}>
-      <fieldset className={styles.sections} disabled={!canEdit} style={{ border: 0, margin: 0, padding: 0 }}>
+      <fieldset className={styles.sections} disabled={!canEdit}>
         <Section title={t('rates.title')} text={t('rates.text')}>
           <RateRows control={control} canEdit={canEdit} />
           <RateFile

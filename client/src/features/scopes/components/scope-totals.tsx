@@ -10,9 +10,11 @@ const figures = [
   { key: 'sawFt', unit: 'ft' },
   { key: 'overcutFt', unit: 'ft' },
   { key: 'crossCutFt', unit: 'ft' },
+  { key: 'sawSqFt', unit: 'sq ft' },
   { key: 'coreHoles', unit: '' },
   { key: 'coreInches', unit: 'in' },
   { key: 'pieces', unit: '' },
+  { key: 'pieceCuts', unit: '' },
   { key: 'removedLb', unit: 'lb' },
 ] as const satisfies readonly { key: keyof Totals; unit: string }[];
 
@@ -28,6 +30,8 @@ export function ScopeTotals(props: {
 }) {
   const { totals, cuts, takeoffs: known } = props;
   const { t } = useTranslation('scope');
+  // Square feet are what a wire cut is sold by; elsewhere they say the same as inch-feet.
+  const hasWire = cuts.some(({ cut }) => cut.kind === 'wire');
   const takeoffs = useMemo(
     () => known ?? takeoffCutList({ cuts: cuts.map((line) => line.cut) }).cuts,
     [known, cuts],
@@ -35,7 +39,7 @@ export function ScopeTotals(props: {
   return (
     <dl className={styles.totals}>
       {figures
-        .filter(({ key }) => totals[key] > 0)
+        .filter(({ key }) => totals[key] > 0 && (key !== 'sawSqFt' || hasWire))
         .map(({ key, unit }) => (
           <div key={key}>
             <dt>{t(`totals.${key}`)}</dt>
