@@ -1,5 +1,5 @@
 import { setSecondFactorSchema, type NewSecondFactorView } from '@kerfyard/common/people';
-import { Button, Text } from '@radix-ui/themes';
+import { Button, Link, Text } from '@radix-ui/themes';
 import { lazy, Suspense } from 'react';
 import { useTranslation } from 'react-i18next';
 import { TextField } from '../../../components/form/fields.tsx';
@@ -30,7 +30,12 @@ export function SecondFactorSetup(props: {
             <QrCode text={props.secret.address} label={t('factor.picture')} />
           </Suspense>
         </div>
-        <Text as="p" size="2" color="gray" mt="3">
+        <Text as="p" size="2" mt="3">
+          <Link href={props.secret.address} underline="always">
+            {t('factor.openHere')}
+          </Link>
+        </Text>
+        <Text as="p" size="2" color="gray" mt="2">
           {t('factor.orType')}
         </Text>
         <Text as="p" size="2" className={styles.secret}>

@@ -3,14 +3,10 @@ import { useWatch, type Control, type FieldPath, type FieldValues } from 'react-
 import { useTranslation } from 'react-i18next';
 import { RadioField } from '../../../components/form/choice-fields.tsx';
 import { MoneyField } from '../../../components/form/number-fields.tsx';
+import { limitsFor } from '../limits-for.ts';
 import styles from './people.module.css';
 
-const limitsOf: Record<CompanyKind, readonly ('signCents' | 'setAsideCents' | 'changeCents')[]> = {
-  general_contractor: ['signCents', 'setAsideCents', 'changeCents'],
-  cutting_contractor: ['signCents', 'changeCents'],
-};
-
-/** What a person may do, and up to how many dollars. The form has `role` and `limits`; an owner has no limits. */
+/** What a person may do, and up to how many dollars. The form has `role` and `limits`. */
 export function RoleAndLimits<Input extends FieldValues, Output>({
   control,
   kind,
@@ -20,7 +16,7 @@ export function RoleAndLimits<Input extends FieldValues, Output>({
 }) {
   const { t } = useTranslation('people');
   const roleField = 'role' as FieldPath<Input>;
-  const role = useWatch({ control, name: roleField }) as Role;
+  const shown = limitsFor(kind, useWatch({ control, name: roleField }) as Role);
   return (
     <>
       <RadioField
@@ -33,9 +29,9 @@ export function RoleAndLimits<Input extends FieldValues, Output>({
           note: t(`roleNote.${kind}.${one}`),
         }))}
       />
-      {role !== 'owner' && (
+      {shown.length > 0 && (
         <div className={styles.limits}>
-          {limitsOf[kind].map((limit) => (
+          {shown.map((limit) => (
             <MoneyField
               key={limit}
               control={control}
