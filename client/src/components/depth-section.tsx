@@ -27,10 +27,13 @@ export function DepthSection({ section: input }: { section: DepthSectionInput })
   const { t } = useTranslation('drawings');
   const section = useMemo(() => depthSection(input), [input]);
   const { beyond } = section;
+  const isSlab = section.element === 'slab';
+  const middle = middleOf(beyond.box);
   const beyondLabel: DrawingLabel = {
-    at: middleOf(beyond.box),
-    text: t(`${section.element === 'slab' ? 'below' : 'behind'}.${beyond.kind}`),
-    side: 'centre',
+    // Behind a wall there is no width for words: they stand under it.
+    at: isSlab ? middle : { x: middle.x, y: section.box.y + section.box.height },
+    text: t(`${isSlab ? 'below' : 'behind'}.${beyond.kind}`),
+    side: isSlab ? 'centre' : 'below',
     isLoud: beyond.loudness > 2,
   };
   return (

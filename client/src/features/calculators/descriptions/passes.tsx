@@ -83,7 +83,7 @@ export default defineCalculator({
     const reach = explain.bladeReachIn({ diameterIn, mount });
     const reachIn = Number(reach.value);
     const speed = rpm === undefined ? null : explain.surfaceSpeedSfm({ diameterIn, rpm });
-    const isFast = speed !== null && mount === 'hand' && Number(speed.value) > usualRimSpeedLimitSfm.rows;
+    const isFast = speed !== null && Number(speed.value) > usualRimSpeedLimitSfm.rows;
     return {
       blocks: [
         {
