@@ -37,44 +37,14 @@ export function TabulationTable({ view, bids, canPlug, onPlug, award }: Tabulati
       {/* A wide table scrolls by itself; keyboards reach it because it takes the focus. */}
       <div className={styles.scroll} tabIndex={0} role="group" aria-labelledby="tabulation">
         <table className={styles.table}>
-          <thead>
-            <tr>
-              <th scope="col">{t('table.item')}</th>
-              <th scope="col" className={styles.right}>
-                {t('table.plug')}
-              </th>
-              {bids.map(({ bid }) => (
-                <th key={bid.id} scope="col" className={styles.crew}>
-                  <a href={`#bid-${bid.id}`}>{bid.crew.name}</a>
-                  {view.awardedBidId === bid.id && <StatusWord tone="done">{t('award.awarded')}</StatusWord>}
-                </th>
-              ))}
-            </tr>
-          </thead>
+          <Head view={view} bids={bids} />
           <tbody>
             <SumRow
               label={t('table.base')}
               bids={bids}
               cell={({ row }) => <MoneyText cents={row.baseCents} />}
             />
-            {view.rows.map(({ item, plugCents }) => (
-              <tr key={item}>
-                <th scope="row">{t(`scope:items.${item}`)}</th>
-                <td className={styles.right}>
-                  <PlugInput
-                    label={t('table.plugFor', { item: t(`scope:items.${item}`) })}
-                    cents={plugCents}
-                    disabled={!canPlug}
-                    onSave={(cents) => onPlug(item, cents)}
-                  />
-                </td>
-                {bids.map(({ bid, row }) => (
-                  <td key={bid.id} className={styles.right}>
-                    <Answer answer={row.answers[item] ?? 'unclear'} plugCents={plugCents} />
-                  </td>
-                ))}
-              </tr>
-            ))}
+            <ItemRows view={view} bids={bids} canPlug={canPlug} onPlug={onPlug} />
             <SumRow
               label={t('table.leftOut')}
               bids={bids}
@@ -86,26 +56,7 @@ export function TabulationTable({ view, bids, canPlug, onPlug, award }: Tabulati
               bids={bids}
               cell={(compared) => <Adjusted compared={compared} view={view} />}
             />
-            <SumRow label={t('table.notSaid')} bids={bids} cell={({ row }) => formatNumber(row.unclear, 0)} />
-            <SumRow
-              label={t('table.distance')}
-              bids={bids}
-              cell={({ bid }) =>
-                bid.distanceMi === null ? '' : t('table.miles', { miles: formatNumber(bid.distanceMi, 0) })
-              }
-            />
-            <SumRow
-              label={t('table.valid')}
-              bids={bids}
-              cell={({ bid }) => t('table.days', { count: bid.input.validDays })}
-            />
-            <SumRow
-              label={t('table.start')}
-              bids={bids}
-              cell={({ bid }) =>
-                bid.input.startFrom === null ? t('table.any') : formatDate(bid.input.startFrom)
-              }
-            />
+            <FactRows bids={bids} />
             <tr className={styles.awards}>
               <td />
               <td />
@@ -119,6 +70,80 @@ export function TabulationTable({ view, bids, canPlug, onPlug, award }: Tabulati
         </table>
       </div>
     </section>
+  );
+}
+
+function Head({ view, bids }: Pick<TabulationTableProps, 'view' | 'bids'>) {
+  const { t } = useTranslation('tabulation');
+  return (
+    <thead>
+      <tr>
+        <th scope="col">{t('table.item')}</th>
+        <th scope="col" className={styles.right}>
+          {t('table.plug')}
+        </th>
+        {bids.map(({ bid }) => (
+          <th key={bid.id} scope="col" className={styles.crew}>
+            <a href={`#bid-${bid.id}`}>{bid.crew.name}</a>
+            {view.awardedBidId === bid.id && <StatusWord tone="done">{t('award.awarded')}</StatusWord>}
+          </th>
+        ))}
+      </tr>
+    </thead>
+  );
+}
+
+/** One row for each item the scope gives to the crew. */
+function ItemRows({ view, bids, canPlug, onPlug }: Omit<TabulationTableProps, 'award'>) {
+  const { t } = useTranslation(['tabulation', 'scope']);
+  return (
+    <>
+      {view.rows.map(({ item, plugCents }) => (
+        <tr key={item}>
+          <th scope="row">{t(`scope:items.${item}`)}</th>
+          <td className={styles.right}>
+            <PlugInput
+              label={t('table.plugFor', { item: t(`scope:items.${item}`) })}
+              cents={plugCents}
+              disabled={!canPlug}
+              onSave={(cents) => onPlug(item, cents)}
+            />
+          </td>
+          {bids.map(({ bid, row }) => (
+            <td key={bid.id} className={styles.right}>
+              <Answer answer={row.answers[item] ?? 'unclear'} plugCents={plugCents} />
+            </td>
+          ))}
+        </tr>
+      ))}
+    </>
+  );
+}
+
+/** What is worth knowing beside the price. */
+function FactRows({ bids }: Pick<TabulationTableProps, 'bids'>) {
+  const { t } = useTranslation('tabulation');
+  return (
+    <>
+      <SumRow label={t('table.notSaid')} bids={bids} cell={({ row }) => formatNumber(row.unclear, 0)} />
+      <SumRow
+        label={t('table.distance')}
+        bids={bids}
+        cell={({ bid }) =>
+          bid.distanceMi === null ? '' : t('table.miles', { miles: formatNumber(bid.distanceMi, 0) })
+        }
+      />
+      <SumRow
+        label={t('table.valid')}
+        bids={bids}
+        cell={({ bid }) => t('table.days', { count: bid.input.validDays })}
+      />
+      <SumRow
+        label={t('table.start')}
+        bids={bids}
+        cell={({ bid }) => (bid.input.startFrom === null ? t('table.any') : formatDate(bid.input.startFrom))}
+      />
+    </>
   );
 }
 

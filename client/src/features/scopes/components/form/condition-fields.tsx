@@ -20,16 +20,9 @@ const choices = {
 /** What is cut and where, and what may hurt there. */
 export const ConditionFields = memo(function ConditionFields({ lines }: { lines: readonly DraftCut[] }) {
   const { t } = useTranslation(['scopes', 'scope']);
-  const { control, getValues, setValue } = useFormContext<ScopeFormValues>();
+  const { control } = useFormContext<ScopeFormValues>();
   const conditions = useWatch({ control, name: 'conditions' });
   const whole = useMemo(() => wholeLines(lines), [lines]);
-  const overcut = whole
-    .filter(({ cut }) => cut.kind === 'opening' && cut.corners === 'overcut')
-    .map((line) => line.mark);
-  // Engines stay outside unless someone says otherwise.
-  const chooseIndoors = (indoors: boolean) => {
-    if (getValues('conditions.enginesAllowed') === null) setValue('conditions.enginesAllowed', !indoors);
-  };
   const select = (name: keyof typeof choices, hint?: string) => (
     <SelectField
       control={control}
@@ -62,35 +55,7 @@ export const ConditionFields = memo(function ConditionFields({ lines }: { lines:
           maxLength={60}
         />
       </div>
-      <div className={styles.triple}>
-        <YesNoField
-          control={control}
-          name="conditions.indoors"
-          label={t('scope:conditions.indoors')}
-          hint={t('conditions.indoorsHint')}
-          onChoose={chooseIndoors}
-        />
-        <YesNoField
-          control={control}
-          name="conditions.enginesAllowed"
-          label={t('scope:conditions.enginesAllowed')}
-          hint={
-            conditions.indoors === true && conditions.enginesAllowed === true
-              ? t('conditions.enginesIndoors')
-              : undefined
-          }
-        />
-        <YesNoField
-          control={control}
-          name="conditions.overcutsAllowed"
-          label={t('scope:conditions.overcutsAllowed')}
-          hint={
-            conditions.overcutsAllowed === false && overcut.length > 0
-              ? t('conditions.overcutsClash', { marks: overcut.join(', ') })
-              : undefined
-          }
-        />
-      </div>
+      <Permissions lines={whole} />
       <div className={styles.pair}>
         <TextField
           control={control}
@@ -122,6 +87,51 @@ export const ConditionFields = memo(function ConditionFields({ lines }: { lines:
     </>
   );
 });
+
+/** What is allowed there; each warns where it does not fit the rest. */
+function Permissions({ lines }: { lines: readonly CutLine[] }) {
+  const { t } = useTranslation(['scopes', 'scope']);
+  const { control, getValues, setValue } = useFormContext<ScopeFormValues>();
+  const conditions = useWatch({ control, name: 'conditions' });
+  const overcut = lines
+    .filter(({ cut }) => cut.kind === 'opening' && cut.corners === 'overcut')
+    .map((line) => line.mark);
+  // Engines stay outside unless someone says otherwise.
+  const chooseIndoors = (indoors: boolean) => {
+    if (getValues('conditions.enginesAllowed') === null) setValue('conditions.enginesAllowed', !indoors);
+  };
+  return (
+    <div className={styles.triple}>
+      <YesNoField
+        control={control}
+        name="conditions.indoors"
+        label={t('scope:conditions.indoors')}
+        hint={t('conditions.indoorsHint')}
+        onChoose={chooseIndoors}
+      />
+      <YesNoField
+        control={control}
+        name="conditions.enginesAllowed"
+        label={t('scope:conditions.enginesAllowed')}
+        hint={
+          conditions.indoors === true && conditions.enginesAllowed === true
+            ? t('conditions.enginesIndoors')
+            : undefined
+        }
+      />
+      <YesNoField
+        control={control}
+        name="conditions.overcutsAllowed"
+        label={t('scope:conditions.overcutsAllowed')}
+        hint={
+          conditions.overcutsAllowed === false && overcut.length > 0
+            ? t('conditions.overcutsClash', { marks: overcut.join(', ') })
+            : undefined
+        }
+      />
+    </div>
+  );
+}
 
 function wholeLines(lines: readonly DraftCut[]): CutLine[] {
   return lines.flatMap((line) => {
