@@ -37,6 +37,8 @@ export function CutTable({ cuts }: { cuts: readonly CutLine[] }) {
         ''
       ),
     csv: ({ takeoff }) => takeoff[key],
+    // The sums above the table say it too; the words of a cut need the room.
+    ...(key === 'sawFt' ? { narrow: 'hide' as const } : {}),
   });
   const columns: Column<Row>[] = [
     { key: 'mark', head: t('cuts.mark'), cell: ({ line }) => line.mark, csv: ({ line }) => line.mark },
