@@ -17,8 +17,10 @@ import { homeOf, paths } from '../lib/paths.ts';
 export default function InvitationPage() {
   const { t } = useTranslation('people');
   const token = useSearchParams()[0].get('token') ?? '';
-  const offer = useQuery(offerQuery(token));
-  const [isAccepted, setIsAccepted] = useState(false);
+  const [accepted, setAccepted] = useState<InvitationOfferView | null>(null);
+  // Once taken up it is not asked for again: its link would say that it was used.
+  const offer = useQuery({ ...offerQuery(token), enabled: token !== '' && accepted === null });
+  if (accepted !== null) return <Joined offer={accepted} />;
   if (token === '') {
     return (
       <Page title={t('accept.title')} width="narrow">
@@ -42,7 +44,6 @@ export default function InvitationPage() {
       </Page>
     );
   }
-  if (isAccepted) return <Joined offer={offer.data} />;
   const { company, email, role, invitedBy, hasAccount } = offer.data;
   return (
     <Page
@@ -58,7 +59,7 @@ export default function InvitationPage() {
         />
       ) : (
         <div className="k-panel" style={{ maxWidth: '28rem' }}>
-          <AcceptForm token={token} email={email} onAccepted={() => setIsAccepted(true)} />
+          <AcceptForm token={token} email={email} onAccepted={() => setAccepted(offer.data)} />
         </div>
       )}
     </Page>

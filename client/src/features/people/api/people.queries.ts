@@ -52,7 +52,6 @@ export function offerQuery(token: string) {
     queryKey: peopleKeys.offer(token),
     queryFn: () =>
       api.post<InvitationOfferView>('/api/auth/invitation', { token }, { whenSignedOut: 'throw' }),
-    enabled: token !== '',
     staleTime: Infinity,
   });
 }
