@@ -1,4 +1,6 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { methodsOfCutHere } from '../bids/index.ts';
 import { CuttingInputError, type NumberOrigin } from '../cutting/index.ts';
 import { emptyRateCard, type Method, type RateCard } from '../people/index.ts';
 import { cutSchema, type CutInput, type CutLine } from '../scopes/index.ts';
@@ -104,6 +106,10 @@ describe('the estimate of a job', () => {
     // 6 × (8 ÷ 2 + 6) minutes.
     const mine = estimateJob(job([[core, 'core_drill']], { card })).tools[0];
     expect([mine?.low, mine?.high]).toEqual([1, 1]);
+    expect(origins(mine?.working ?? [])).toEqual(['company']);
+    card.production.coreFeeds = [];
+    const half = estimateJob(job([[core, 'core_drill']], { card })).tools[0];
+    expect(origins(half?.working ?? [])).toEqual(['company', 'common practice']);
   });
 
   it('counts blades, bits and the crew’s hours at the crew’s own cost, and nothing it has no cost for', () => {
@@ -209,5 +215,45 @@ describe('the estimate of a job', () => {
       { tool: 'wire_saw', unit: 'sq ft', quantity: 50, low: 2, high: 6.25 },
       { tool: 'core', quantity: 2, low: 70 / 60 },
     ]);
+  });
+
+  it('answers any list of cuts with finite figures, or refuses it by name', () => {
+    const size = fc.double({ min: 0.3, max: 90, noNaN: true });
+    const count = fc.integer({ min: 1, max: 10_000 });
+    const cut: fc.Arbitrary<CutInput> = fc.oneof(
+      fc.record({ kind: fc.constant('line' as const), lengthFt: size, depthIn: size, count }),
+      fc.record({ kind: fc.constant('core' as const), diameterIn: size, depthIn: size, count }),
+      fc.record({
+        kind: fc.constant('wire' as const),
+        areaSqFt: size,
+        pilotCores: fc.integer({ min: 0, max: 9 }),
+        pilotDiameterIn: size,
+        depthIn: size,
+        count,
+      }),
+      fc.record({ kind: fc.constant('block' as const), cutLengthIn: size, depthIn: size, count }),
+      fc.record({ kind: fc.constant('pipe' as const), outsideDiameterIn: size, count }),
+    );
+    const place = { ...outside, indoors: true, below: 'unoccupied' } as const;
+    let estimated = 0;
+    fc.assert(
+      fc.property(fc.array(cut, { maxLength: 5 }), (list) => {
+        const input = job(
+          list.map((one) => [one, methodsOfCutHere(cutSchema.parse(one), place)[0] ?? null] as const),
+          { place },
+        );
+        try {
+          const { hours, drums, waterGal } = estimateJob(input);
+          estimated += 1;
+          for (const { low, high } of [hours, drums, waterGal]) {
+            expect(Number.isFinite(low) && Number.isFinite(high) && low <= high).toBe(true);
+          }
+        } catch (error) {
+          expect(error).toBeInstanceOf(CuttingInputError);
+        }
+      }),
+      { numRuns: 300 },
+    );
+    expect(estimated).toBeGreaterThan(20);
   });
 });

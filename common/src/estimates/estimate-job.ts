@@ -14,6 +14,7 @@ import {
   workPerBatteryPack,
   type ProductionMethod,
   type WorkingSource,
+  type WorkingStep,
 } from '../cutting/index.ts';
 import { sourceOf } from '../cutting/tables/provenance.ts';
 import type { RateCard } from '../people/rate-card.schema.ts';
@@ -108,6 +109,11 @@ function coreTool({ holes, diameterIn, depthIn }: CoreWork, card: RateCard | nul
   const companyInchesPerMinute = feedOf(diameterIn, card);
   const companySetUpMinutes = card?.production.coreSetUpMinutes ?? undefined;
   const run = { holes, diameterIn, depthIn, companyInchesPerMinute };
+  // Where one of the two is the crew's and the other common practice, the engine's step names the latter.
+  const ownSteps = [
+    ...ownStep('Feed', companyInchesPerMinute, 'in a minute'),
+    ...ownStep('Set-up', companySetUpMinutes, 'min'),
+  ];
   const whole = coringHours({ ...run, companySetUpMinutes });
   const drilling = coringHours({ ...run, companySetUpMinutes: 0 });
   return {
@@ -117,7 +123,7 @@ function coreTool({ holes, diameterIn, depthIn }: CoreWork, card: RateCard | nul
       unit: `× Ø ${diameterIn} in`,
       low: whole.lowHours,
       high: whole.highHours,
-      working: oncePerValue(whole.working),
+      working: [...ownSteps, ...oncePerValue(whole.working)],
     },
     water: 'core',
     runLow: drilling.lowHours * 60,
@@ -125,6 +131,11 @@ function coreTool({ holes, diameterIn, depthIn }: CoreWork, card: RateCard | nul
     // A core's kerf is a ring: its circumference is the length of the cut.
     inchFeet: ((Math.PI * diameterIn) / 12) * depthIn * holes,
   };
+}
+
+/** A number off the crew's card as a step of its own, so that it is seen whose it is. */
+function ownStep(label: string, value: number | undefined, unit: string): WorkingStep[] {
+  return value === undefined ? [] : [step(label, 'from your rate card', [], [value, unit], company)];
 }
 
 /** The crew's own feed for a bit: that of the narrowest band that holds it. */

@@ -1,5 +1,4 @@
 import type { NumberOrigin, WorkingStep } from '@kerfyard/common/cutting';
-import type { ReactNode } from 'react';
 import { useTranslation } from 'react-i18next';
 import { Figure } from '../../../components/figure.tsx';
 import styles from './estimate.module.css';
@@ -19,22 +18,16 @@ export function EstimateRow({ label, value, unit = '', working, note, isTotal = 
   const { t } = useTranslation('estimate');
   const whose = whoseNumbers(working);
   const look = isTotal ? styles.strong : undefined;
+  const notes = [...(whose === null ? [] : [t(`whose.${whose}`)]), ...(note === undefined ? [] : [note])];
   return (
     <>
-      <dt className={look}>
-        {label}
-        {whose !== null && <Note>{t(`whose.${whose}`)}</Note>}
-        {note !== undefined && <Note>{note}</Note>}
-      </dt>
+      <dt className={look}>{label}</dt>
       <dd className={look}>
         <Figure label={label} value={value} unit={unit} working={working} />
       </dd>
+      {notes.length > 0 && <dd className={styles.note}>{notes.join('. ')}</dd>}
     </>
   );
-}
-
-function Note({ children }: { children: ReactNode }) {
-  return <span className={styles.note}>{children}</span>;
 }
 
 /** Whose numbers a working used, beside arithmetic and published tables: the crew's, common practice, or both. */

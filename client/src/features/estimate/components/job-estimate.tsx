@@ -60,7 +60,10 @@ export function JobEstimate({ scopeId, body, methods, priced, distanceMi }: JobE
         </>
       ) : (
         <Text as="p" role="alert" color="red" size="2">
-          {t('wrong', { field: t(`fields.${reading.field}`), allowed: reading.allowed })}
+          {t('wrong', {
+            field: t(`fields.${reading.field}`, { defaultValue: t('fields.cuts') }),
+            allowed: reading.allowed,
+          })}
         </Text>
       )}
       <EstimateInputs control={control} />
