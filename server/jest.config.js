@@ -10,7 +10,17 @@ const swc = {
   },
 };
 // jest on Node 20 cannot require an ES module, so what an in-process spec loads is transformed.
-const esmOnly = ['@nestjs', 'file-type', 'strtok3', 'token-types', 'uint8array-extras', '@tokenizer', '@borewit', 'load-esm', 'uuid'];
+const esmOnly = [
+  '@nestjs',
+  'file-type',
+  'strtok3',
+  'token-types',
+  'uint8array-extras',
+  '@tokenizer',
+  '@borewit',
+  'load-esm',
+  'uuid',
+];
 
 export default {
   testEnvironment: 'node',
@@ -22,7 +32,11 @@ export default {
     '^.+\\.m?js$': ['@swc/jest', { ...swc, jsc: { ...swc.jsc, parser: { syntax: 'ecmascript' } } }],
   },
   transformIgnorePatterns: [`/node_modules/(?!(${esmOnly.join('|')})/)`],
-  testMatch: ['<rootDir>/src/**/*.spec.ts', '<rootDir>/fakes/**/*.spec.ts', '<rootDir>/test/**/*.e2e-spec.ts'],
+  testMatch: [
+    '<rootDir>/src/**/*.spec.ts',
+    '<rootDir>/fakes/**/*.spec.ts',
+    '<rootDir>/test/**/*.e2e-spec.ts',
+  ],
   modulePathIgnorePatterns: ['<rootDir>/dist/', '<rootDir>/dist-fakes/'],
   globalSetup: '<rootDir>/test/global-setup.mjs',
   globalTeardown: '<rootDir>/test/global-teardown.mjs',

@@ -3,6 +3,9 @@ module.exports = (request, options) => {
   try {
     return options.defaultResolver(request, options);
   } catch {
-    return options.defaultResolver(request, { ...options, conditions: [...(options.conditions ?? []), 'import'] });
+    return options.defaultResolver(request, {
+      ...options,
+      conditions: [...(options.conditions ?? []), 'import'],
+    });
   }
 };
