@@ -8,8 +8,8 @@ const debianBrowsers = ['/usr/bin/chromium', '/usr/bin/chromium-headless-shell']
 export default defineConfig({
   testDir: 'specs',
   outputDir: 'test-results',
-  timeout: 60_000,
-  expect: { timeout: 10_000 },
+  timeout: 120_000,
+  expect: { timeout: 15_000 },
   workers: 2,
   fullyParallel: true,
   forbidOnly: Boolean(process.env.CI),

@@ -64,13 +64,12 @@ test('a sign-up says everything that is wrong at once', async ({ visit }) => {
 });
 
 test('a scope in the making loses nothing and says all that is missing', async ({ visit }) => {
-  test.setTimeout(90_000);
   const gc = await makeGeneralContractor();
   const visitor = await visit();
   const { page } = visitor;
   await signIn(visitor, gc.owner.email, '/scopes');
   await visitor.audit();
-  await beginScope(page);
+  await beginScope(visitor);
   const form = scopeForm(page);
   const title = form.getByLabel('Title');
   const isSaved = () => expect(form.getByText(/^Saved( \d+ s ago)?$/)).toBeVisible({ timeout: 15_000 });
@@ -123,7 +122,6 @@ test('a bid in the making loses nothing either', async ({ visit }) => {
     makeGeneralContractor(),
     makeCuttingContractor({ yard: { ...DENVER } }),
   ]);
-  test.setTimeout(90_000);
   const scope = await publishScope(gc, { site: { ...DENVER } });
   const visitor = await visit('phone');
   const { page } = visitor;

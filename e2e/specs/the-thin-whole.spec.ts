@@ -20,7 +20,7 @@ const title = `Feeder trench ${Date.now().toString(36)}`;
 const rates = { L1: '1.10', T1: '0.95', O1: '1.45', C1: '85' };
 
 test('a scope travels from sign-up to released money, in two browsers', async ({ visit }) => {
-  test.setTimeout(170_000);
+  test.setTimeout(300_000);
   const [gc, crew] = await Promise.all([visit('desk'), visit('phone')]);
 
   await test.step('both sign up, and the crew says what it has', async () => {

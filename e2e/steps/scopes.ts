@@ -15,10 +15,12 @@ const cuts = [
   { kind: 'core', mark: 'C1', figures: { Diameter: '4', Depth: '8', 'How many': '6' } },
 ];
 
-export async function beginScope(page: Page): Promise<void> {
+export async function beginScope(visitor: Visitor): Promise<void> {
+  const { page } = visitor;
   await page.getByRole('link', { name: 'Scopes', exact: true }).click();
   await page.getByRole('link', { name: 'New scope' }).first().click();
   await expect(scopeForm(page)).toBeVisible();
+  visitor.passedBy('/scopes/new');
 }
 
 export async function fillSite(page: Page, zip: string): Promise<void> {
@@ -86,7 +88,7 @@ export async function fillTerms(form: Locator): Promise<void> {
 export async function postScope(visitor: Visitor, scope: { title: string; zip: string }): Promise<string> {
   const { page } = visitor;
   await visitor.audit();
-  await beginScope(page);
+  await beginScope(visitor);
   const form = scopeForm(page);
   await form.getByLabel('Title').fill(scope.title);
   await fillSite(page, scope.zip);
