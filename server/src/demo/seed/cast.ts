@@ -22,6 +22,7 @@ export interface DemoCompany {
   trucks?: readonly string[];
   /** Has finished its payout set-up. */
   isPaidOut?: boolean;
+  hasRateCard?: boolean;
 }
 
 export const DEMO_PASSWORD = 'chalk line at dawn';
@@ -73,6 +74,7 @@ export const demoCompanies: readonly DemoCompany[] = [
     crews: ['Beto and Lark', 'Wall saw crew'],
     trucks: ['Truck 3, flat saw', 'Truck 7, wall saw'],
     isPaidOut: true,
+    hasRateCard: true,
   },
   {
     key: 'ferrow',

@@ -5,6 +5,7 @@ import { verifyToken } from '../../people/verify-token.ts';
 import type { Config } from '../../platform/config/config.ts';
 import { newId } from '../../platform/ids/ids.ts';
 import { DEMO_PASSWORD, demoCompanies, demoStaff, emailOf, type DemoCompany } from './cast.ts';
+import { demoRateCard } from './demo-rate-card.ts';
 import { DemoBrowser } from './demo-browser.ts';
 import {
   ADD_MEMBER,
@@ -117,6 +118,9 @@ export class DemoWorld {
     });
     for (const name of company.crews ?? []) await browser.post('/api/company/crews', { id: newId(), name });
     for (const name of company.trucks ?? []) await browser.post('/api/company/trucks', { id: newId(), name });
+    if (company.hasRateCard === true) {
+      await browser.put('/api/company/rate-card', { version: 0, card: demoRateCard });
+    }
     if (company.isPaidOut !== true) return;
     await browser.post('/api/company/payouts');
     const { rows } = await this.owner.query<{ payout_account_id: string }>(PAYOUT_ACCOUNT, [companyId]);
