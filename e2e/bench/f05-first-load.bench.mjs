@@ -40,9 +40,9 @@ async function buildEmptyPage() {
 
 /** Runs in the page before anything else of it. */
 function watchPaints() {
-  window.largestPaint = 0;
+  globalThis.largestPaint = 0;
   new PerformanceObserver((list) => {
-    window.largestPaint = list.getEntries().at(-1).startTime;
+    globalThis.largestPaint = list.getEntries().at(-1).startTime;
   }).observe({ type: 'largest-contentful-paint', buffered: true });
 }
 
@@ -71,7 +71,7 @@ async function visit(chrome, { url, cookies, shown }) {
     session.on('Network.responseReceived', ({ requestId, type }) => {
       if (type === 'Script') scripts.add(requestId);
     });
-    session.on('Network.loadingFinished', ({ requestId, encodedDataLength }) => {
+    session.on('Network.dataReceived', ({ requestId, encodedDataLength }) => {
       if (scripts.has(requestId)) scriptBytes += encodedDataLength;
     });
     await page.addInitScript(watchPaints);
@@ -80,7 +80,7 @@ async function visit(chrome, { url, cookies, shown }) {
     const bytes = scriptBytes;
     // The last picture may still be on its way to the screen.
     await sleep(1_500);
-    return { lcp: await page.evaluate(() => window.largestPaint), bytes };
+    return { lcp: await page.evaluate(() => globalThis.largestPaint), bytes };
   } finally {
     await context.close();
   }

@@ -6,7 +6,6 @@ import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { Passwords } from '../src/platform/auth/passwords.ts';
-import { prepareQueues } from '../src/platform/jobs/prepare-queues.ts';
 import { BOOK_CHECKS } from '../src/ledger/ledger.queries.ts';
 import { acceptLines, makeMoneyWork, type MoneyWork } from './builders/money-work.ts';
 import { signIn } from './builders/people.ts';
@@ -87,23 +86,28 @@ class App {
   }
 
   async untilUp(): Promise<void> {
-    await until(
-      'the app',
-      async () =>
-        (await fetch(`${this.url}/api/health`).then(
-          ({ ok }) => ok,
-          () => false,
-        )) || null,
-      120_000,
-    );
+    const isUp = async () => {
+      if (this.child?.exitCode != null) throw new Error(`the app ended with ${this.child.exitCode}`);
+      const health = await fetch(`${this.url}/api/health`).catch(() => null);
+      return health?.ok === true ? true : null;
+    };
+    await until('the app', isUp, 120_000);
   }
 
   async kill(): Promise<void> {
     const child = this.child;
-    if (child === null || child.exitCode !== null) return;
+    if (child === null || child.exitCode !== null || child.signalCode !== null) return;
     child.kill('SIGKILL');
     await once(child, 'exit');
   }
+}
+
+/** The job runner's schema with the rest, by the program that a deployment runs. */
+async function migrateAsDeployed(ownerUrl: string): Promise<void> {
+  const env = { PATH: process.env.PATH, DATABASE_OWNER_URL: ownerUrl };
+  const child = spawn(process.execPath, [join(__dirname, '../dist/migrate.js')], { stdio: 'inherit', env });
+  const [code] = (await once(child, 'exit')) as [number | null];
+  if (code !== 0) throw new Error(`migrating ended with ${code}`);
 }
 
 /** Passes requests on to the provider without their idempotency keys. */
@@ -267,7 +271,7 @@ async function runKills(kills: number, withKeys: boolean) {
   const random = createRandom(withKeys ? seed : seed + 1);
   const port = await freePort();
   const webhook = { url: `http://127.0.0.1:${port}/api/payments/webhooks/account`, secret: WEBHOOK_SECRET };
-  const lab = await openMoneyLab(prepareQueues, [{ ...webhook, connect: false }]);
+  const lab = await openMoneyLab(migrateAsDeployed, [{ ...webhook, connect: false }]);
   const stripper = withKeys ? null : await startKeyStripper(lab.stripeUrl);
   const app = new App(lab, port, stripper?.url ?? lab.stripeUrl);
   try {

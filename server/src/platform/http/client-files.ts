@@ -3,6 +3,7 @@ import { join } from 'node:path';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import type { NextFunction, Request, Response } from 'express';
 import { compressedAssets } from './compressed-assets.ts';
+import { PageHints } from './page-hints.ts';
 
 const SERVER_PATHS = /^\/(?:api|socket\.io)(?:\/|$)/;
 const HASHED = /[\\/]assets[\\/]/;
@@ -10,6 +11,7 @@ const HASHED = /[\\/]assets[\\/]/;
 /** Serves the built client; every other page address gets its one page, which routes by itself. */
 export function serveClient(app: NestExpressApplication, clientDist: string): void {
   const page = join(clientDist, 'index.html');
+  const hints = new PageHints(clientDist);
   app.use(compressedAssets(clientDist));
   app.useStaticAssets(clientDist, {
     index: false,
@@ -29,6 +31,8 @@ export function serveClient(app: NestExpressApplication, clientDist: string): vo
       return;
     }
     response.setHeader('Cache-Control', 'no-cache');
+    const links = hints.linksFor(request.path, /-access=/.test(request.headers.cookie ?? ''));
+    if (links !== '') response.setHeader('Link', links);
     response.sendFile(page, { dotfiles: 'allow' });
   });
 }

@@ -32,8 +32,9 @@ export function compressedAssets(clientDist: string): RequestHandler {
     return made;
   };
   return async (request: Request, response: Response, next: NextFunction): Promise<void> => {
-    const encoding = ASSET.test(request.path) ? request.acceptsEncodings(Object.keys(encoders)) : false;
-    if (request.method !== 'GET' || encoding === false || request.headers.range !== undefined) return next();
+    const isWhole = request.method === 'GET' && request.headers.range === undefined;
+    const encoding = isWhole && ASSET.test(request.path) ? bestEncoding(request) : undefined;
+    if (encoding === undefined) return next();
     const bytes = await compressed(request.path, encoding);
     if (bytes === null) return next();
     response.type(extname(request.path));
@@ -44,4 +45,9 @@ export function compressedAssets(clientDist: string): RequestHandler {
     });
     response.end(bytes);
   };
+}
+
+/** Ours is the order: a browser that takes both would be given gzip by its own. */
+function bestEncoding(request: Request): string | undefined {
+  return Object.keys(encoders).find((name) => request.acceptsEncodings(name) !== false);
 }
