@@ -98,6 +98,11 @@ export interface JointsCut {
   readonly thicknessIn: number;
   readonly spacingFactor: number;
   readonly capFt: number;
+  /** Longer over shorter side of a panel; 1.5 when left out. */
+  readonly maxAspect?: number | undefined;
+  /** Between column lines; together they make up the side. */
+  readonly baysAlongLengthFt?: readonly number[] | undefined;
+  readonly baysAlongWidthFt?: readonly number[] | undefined;
   readonly count: number;
 }
 

@@ -82,6 +82,14 @@ const stitch = z.strictObject({
   count,
 });
 
+/** As many bays along a side as the engine takes. */
+const MAX_BAYS = 200;
+const baysFt = z
+  .array(measure('ft', 0.1, 100_000))
+  .min(1)
+  .max(MAX_BAYS)
+  .optional();
+
 const joints = z.strictObject({
   kind: z.literal('joints'),
   lengthFt,
@@ -89,6 +97,9 @@ const joints = z.strictObject({
   thicknessIn: measureTo(cutLimits.joints.thicknessIn, cutLimits.joints.thicknessIn.min),
   spacingFactor: measure('thicknesses', 24, 36).default(30),
   capFt: measureTo(cutLimits.joints.capFt, 2).default(15),
+  maxAspect: measure('to 1', 1, 10).optional(),
+  baysAlongLengthFt: baysFt,
+  baysAlongWidthFt: baysFt,
   count,
 });
 

@@ -126,6 +126,7 @@ export const scopeDraftSchema = z.strictObject({
             z.boolean(),
             z.null(),
             z.array(z.string().max(20)).max(4),
+            z.array(z.number()).max(200),
             draftSection,
           ]),
         ),

@@ -54,9 +54,10 @@ function takeoffOrIssue(line: CutLine, index: number): CutTakeoff | FieldIssue {
   }
 }
 
-/** Joints too many for their panels' shape are said of `maxAspect`, which no cut has: the slab's width is what helps. */
+/** Joints too many for their panels' shape are said of `maxAspect`; where a cut has none, the slab's width is what helps. */
 function fieldOfCut({ cut }: CutLine, field: string): string {
-  return cut.kind === 'joints' && field === 'maxAspect' ? 'widthFt' : field;
+  if (cut.kind !== 'joints') return field;
+  return field === 'maxAspect' && cut.maxAspect === undefined ? 'widthFt' : field;
 }
 
 /** Sums of cuts that have been taken off already. */

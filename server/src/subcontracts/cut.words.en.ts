@@ -69,7 +69,7 @@ export function cutDetails(cut: CutData): string {
     case 'stitch':
       return `${cut.closed ? 'closed loop' : 'open line'}; holes overlap ${figure(cut.overlapIn)} in`;
     case 'joints':
-      return `spacing ${figure(cut.spacingFactor)} thicknesses, at most ${figure(cut.capFt)} ft`;
+      return jointDetails(cut).join('; ');
     case 'wire':
       return cut.pilotCores === 0
         ? 'no pilot cores'
@@ -79,6 +79,18 @@ export function cutDetails(cut: CutData): string {
     default:
       return '';
   }
+}
+
+function jointDetails(cut: Extract<CutData, { kind: 'joints' }>): string[] {
+  const { maxAspect, baysAlongLengthFt, baysAlongWidthFt } = cut;
+  const bays = (side: string, baysFt: readonly number[] | undefined) =>
+    baysFt === undefined ? [] : [`column bays along the ${side} ${baysFt.map(figure).join(', ')} ft`];
+  return [
+    `spacing ${figure(cut.spacingFactor)} thicknesses, at most ${figure(cut.capFt)} ft`,
+    ...(maxAspect === undefined ? [] : [`panels at most ${figure(maxAspect)} to 1`]),
+    ...bays('length', baysAlongLengthFt),
+    ...bays('width', baysAlongWidthFt),
+  ];
 }
 
 function trenchDetails({ sideCuts, endCuts }: Extract<CutData, { kind: 'trench' }>): string[] {

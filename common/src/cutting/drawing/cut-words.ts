@@ -1,4 +1,4 @@
-import type { Cut, CutTakeoff, OpeningCut } from '../types.ts';
+import type { Cut, CutTakeoff, JointsCut, OpeningCut } from '../types.ts';
 
 const plain = new Intl.NumberFormat('en-US', { maximumFractionDigits: 3 });
 
@@ -42,7 +42,7 @@ function nameCut(cut: Cut): string {
     case 'stitch':
       return `Stitched ${cut.closed ? 'loop' : 'line'} ${inWords(cut.lengthIn)} in, ${inWords(cut.bitDiameterIn)}-in bit, ${inWords(cut.depthIn)} in deep`;
     case 'joints':
-      return `Joints in a slab ${size(cut)} ft, ${inWords(cut.thicknessIn)} in thick`;
+      return `Joints in a slab ${size(cut)} ft, ${inWords(cut.thicknessIn)} in thick${baysInWords(cut)}`;
     case 'wire':
       return `Wire cut ${inWords(cut.areaSqFt)} sq ft with ${inWords(cut.pilotCores)} pilot cores`;
     case 'curb':
@@ -68,4 +68,16 @@ function cornersInWords(cut: OpeningCut): string {
   const words = { overcut: 'corners overcut', cored: 'corners cored', square: 'corners finished square' };
   const uncut = cut.uncutSides ?? [];
   return uncut.length === 0 ? words[cut.corners] : `${words[cut.corners]}, not cut: ${uncut.join(', ')}`;
+}
+
+function baysInWords({ baysAlongLengthFt, baysAlongWidthFt }: JointsCut): string {
+  const sides = [
+    ['length', baysAlongLengthFt],
+    ['width', baysAlongWidthFt],
+  ] as const;
+  return sides
+    .flatMap(([side, baysFt]) =>
+      baysFt === undefined ? [] : [`, column bays along the ${side} ${baysFt.map(inWords).join(', ')} ft`],
+    )
+    .join('');
 }
