@@ -150,6 +150,10 @@ export const accessCases: AccessCase[] = [
   ),
   post('/api/company/people/:id/deactivate', ({ member }) => `/api/company/people/${member}/deactivate`),
   post('/api/company/people/:id/reactivate', ({ member }) => `/api/company/people/${member}/reactivate`),
+  remove(
+    '/api/company/people/:id/second-factor',
+    ({ member }) => `/api/company/people/${member}/second-factor`,
+  ),
   remove('/api/company/invitations/:id', ({ invitation }) => `/api/company/invitations/${invitation}`),
   remove('/api/account/sessions/:id', ({ session }) => `/api/account/sessions/${session}`),
   post(

@@ -150,6 +150,35 @@ describe('D-18 a second factor', () => {
   }, 60_000);
 });
 
+describe('a colleague’s second factor', () => {
+  it('is taken away by an owner when phone and codes are lost: sessions end, the colleague hears of it', async () => {
+    const person = await addPerson(company, 'accounts');
+    await setUp(person);
+    const { client, userId } = company.owner;
+    await expectStatus(client.delete(`/api/company/people/${person.userId}/second-factor`), 204);
+    expect((await person.client.get('/api/auth/me')).status).toBe(401);
+    await expectStatus(enter(person.email), 200);
+    await mailTo(person.email, /second factor was taken away/);
+    const again = await client.delete(`/api/company/people/${person.userId}/second-factor`);
+    expect(codeOf(again)).toEqual([409, 'illegal_move']);
+    const [row] = await sql<{ actor_user_id: string }>(
+      `SELECT actor_user_id FROM audit_event WHERE action = 'second_factor.removed' AND subject_id = $1`,
+      [person.userId],
+    );
+    expect(row?.actor_user_id).toBe(userId);
+  });
+
+  it('is not taken away so by its own holder, nor by another role', async () => {
+    const partner = await addPerson(company, 'owner');
+    await setUp(partner);
+    const own = await partner.client.delete(`/api/company/people/${partner.userId}/second-factor`);
+    expect(codeOf(own)).toEqual([409, 'illegal_move']);
+    const manager = await addPerson(company, 'manager');
+    const other = await manager.client.delete(`/api/company/people/${partner.userId}/second-factor`);
+    expect(codeOf(other)).toEqual([403, 'forbidden']);
+  });
+});
+
 describe('D-17 money and the second factor', () => {
   const moves = (client: Client) => [
     client.post(`/api/subcontracts/${randomUUID()}/set-aside`, {

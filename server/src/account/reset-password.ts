@@ -71,7 +71,7 @@ export class PasswordResets implements OnModuleInit {
     await this.limits.take(linkLimits('use-reset', origin));
     const passwordHash = await this.passwords.hash(input.password);
     const tokenHash = hashToken(input.token);
-    const email = await this.uow.run(async (tx) => {
+    const owner = await this.uow.run(async (tx) => {
       const person = await this.uow.row<ResetPersonRow>(tx, USE_RESET, [tokenHash]);
       if (person === null) {
         throw deadLink(await this.uow.row<LinkStateRow>(tx, SELECT_RESET_STATE, [tokenHash]));
@@ -89,8 +89,8 @@ export class PasswordResets implements OnModuleInit {
         subject: { type: 'user', id: person.id },
         origin,
       });
-      return person.email;
+      return person;
     });
-    await this.signIns.forgetTries(email, origin);
+    await this.signIns.forgetTries(owner, origin);
   }
 }

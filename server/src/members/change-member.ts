@@ -1,10 +1,13 @@
 import { Injectable } from '@nestjs/common';
 import type { Actor, EditMember } from '@kerfyard/common/people';
+import { ACCOUNT_NOTICE } from '../people/account-notice.ts';
 import { Audit } from '../platform/audit/audit.ts';
 import type { Origin } from '../platform/auth/access.decorators.ts';
+import { SecondFactors } from '../platform/auth/second-factors.ts';
 import { Sessions } from '../platform/auth/sessions.ts';
 import { UnitOfWork, type Tx } from '../platform/database/unit-of-work.ts';
 import { AppError } from '../platform/http/app-error.ts';
+import { Mailer } from '../platform/mail/mailer.ts';
 import { LiveHints } from '../platform/realtime/live-hints.ts';
 import { companyOf, demandAnotherOwner, lockMember } from './member-access.ts';
 import { MembersMail } from './members.mail.ts';
@@ -22,6 +25,8 @@ export class ChangeMember {
   constructor(
     private readonly uow: UnitOfWork,
     private readonly sessions: Sessions,
+    private readonly secondFactors: SecondFactors,
+    private readonly mailer: Mailer,
     private readonly hints: LiveHints,
     private readonly mail: MembersMail,
     private readonly audit: Audit,
@@ -77,6 +82,23 @@ export class ChangeMember {
       if (member.is_active) throw new AppError('illegal_move');
       await this.uow.rows(tx, REACTIVATE, [memberId]);
       await this.record(tx, actor, { action: 'member.reactivated', memberId, origin });
+    });
+  }
+
+  /**
+   * For a colleague who lost phone and recovery codes: the password alone does again, and they set up a new one. Not for
+   * oneself, who has a page for it that asks for a code.
+   */
+  async removeSecondFactor(actor: Actor, { memberId, origin }: Change): Promise<void> {
+    const companyId = companyOf(actor);
+    await this.uow.run(async (tx) => {
+      await lockMember(this.uow, tx, companyId, memberId);
+      if (memberId === actor.userId || !(await this.secondFactors.remove(tx, memberId))) {
+        throw new AppError('illegal_move');
+      }
+      await this.sessions.endAllOf(tx, memberId, { except: null, because: 'second_factor_removed', origin });
+      await this.mailer.toUsers(tx, ACCOUNT_NOTICE, [memberId], { what: 'second_factor_removed' });
+      await this.record(tx, actor, { action: 'second_factor.removed', memberId, origin });
     });
   }
 

@@ -71,6 +71,18 @@ export class MembersController {
     return this.members.reactivate(actor, { memberId, origin });
   }
 
+  @Delete('people/:id/second-factor')
+  @Needs('people.manage')
+  @RecentSignIn()
+  @HttpCode(HttpStatus.NO_CONTENT)
+  removeSecondFactor(
+    @CurrentActor() actor: Actor,
+    @Param('id', { schema: idSchema }) memberId: string,
+    @RequestOrigin() origin: Origin,
+  ): Promise<void> {
+    return this.members.removeSecondFactor(actor, { memberId, origin });
+  }
+
   @Post('invitations')
   @Needs('people.manage')
   @RecentSignIn()

@@ -98,9 +98,10 @@ export class SignInService {
   }
 
   /** After a reset by mail: what a stranger tried does not keep the owner out. */
-  async forgetTries(email: string, origin: Origin): Promise<void> {
+  async forgetTries({ id, email }: { id: string; email: string }, origin: Origin): Promise<void> {
     await this.limits.forget({ parts: ['sign-in', 'account', email], windows: perAccount });
     await this.limits.forget({ parts: ['sign-in', 'pair', email, origin.ip], windows: perPair });
+    await this.limits.forget({ parts: ['sign-in', 'code', id], windows: perCodeHolder });
   }
 
   /** Unknown accounts are counted as well: the wait must not tell which exist. */

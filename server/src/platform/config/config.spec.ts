@@ -36,8 +36,17 @@ describe('D-30 settings', () => {
       trustProxy: 0,
       rateLimitFactor: 1,
       drainMs: 0,
+      secondFactor: 'money',
       clientDist: null,
     });
+  });
+
+  it('D-18 demand a second factor of those who move money in production, elsewhere only when told', () => {
+    const secondFactor = (over: object) => readConfig({ ...environment, ...over }).secondFactor;
+    expect(secondFactor({ SECOND_FACTOR: 'optional' })).toBe('optional');
+    const demo = { KERFYARD_MODE: 'demo', STRIPE_SECRET_KEY: 'sk_test_0123456789' };
+    expect(secondFactor(demo)).toBe('optional');
+    expect(secondFactor({ ...demo, SECOND_FACTOR: 'money' })).toBe('money');
   });
 
   it('are refused when missing, all of them at once', () => {

@@ -46,6 +46,10 @@ export const useDeactivate = () =>
 export const useReactivate = () =>
   usePeopleMutation((id: string) => api.post<void>(`/api/company/people/${id}/reactivate`));
 
+/** For a colleague who lost phone and recovery codes. */
+export const useRemoveTheirSecondFactor = () =>
+  usePeopleMutation((id: string) => api.delete<void>(`/api/company/people/${id}/second-factor`));
+
 /** What a link offers. Read by POST, so that its token stands in no log; reading does not use it up. */
 export function offerQuery(token: string) {
   return queryOptions({

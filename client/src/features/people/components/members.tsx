@@ -3,7 +3,7 @@ import { Button, Heading, Text } from '@radix-ui/themes';
 import { useTranslation } from 'react-i18next';
 import { ConfirmDialog } from '../../../components/confirm-dialog.tsx';
 import { StatusWord } from '../../../components/status-word.tsx';
-import { useDeactivate, useReactivate } from '../api/people.queries.ts';
+import { useDeactivate, useReactivate, useRemoveTheirSecondFactor } from '../api/people.queries.ts';
 import { EditMemberButton } from './edit-member.tsx';
 import { LimitsLine } from './limits-line.tsx';
 import styles from './people.module.css';
@@ -51,6 +51,7 @@ function MemberButtons({ member, kind }: { member: MemberView; kind: CompanyKind
   return (
     <div className={styles.buttons}>
       {member.isActive && <EditMemberButton member={member} kind={kind} />}
+      {member.details?.hasSecondFactor === true && !member.isSelf && <LostPhoneButton member={member} />}
       <ConfirmDialog
         trigger={
           <Button
@@ -69,5 +70,25 @@ function MemberButtons({ member, kind }: { member: MemberView; kind: CompanyKind
         onConfirm={() => run.mutateAsync(member.id)}
       />
     </div>
+  );
+}
+
+/** Only an owner can help a colleague who lost phone and recovery codes. */
+function LostPhoneButton({ member }: { member: MemberView }) {
+  const { t } = useTranslation('people');
+  const remove = useRemoveTheirSecondFactor();
+  return (
+    <ConfirmDialog
+      trigger={
+        <Button variant="soft" color="gray" size="2" aria-label={t('lostPhone.named', { name: member.name })}>
+          {t('lostPhone.press')}
+        </Button>
+      }
+      title={t('lostPhone.title', { name: member.name })}
+      text={t('lostPhone.text')}
+      confirm={t('lostPhone.confirm')}
+      destructive
+      onConfirm={() => remove.mutateAsync(member.id)}
+    />
   );
 }
