@@ -69,7 +69,11 @@ export function MessageForm({ draftKey, to, onSend, onEarlierArrived }: MessageF
   };
   return (
     // Not a disabled button while sending: it would lose the focus.
-    <div onKeyDown={sendByKey} onSubmitCapture={(event) => isSubmitting && stop(event)}>
+    <div
+      className={styles.write}
+      onKeyDown={sendByKey}
+      onSubmitCapture={(event) => isSubmitting && stop(event)}
+    >
       <Form form={form} onSubmit={send} label={t('form', { name: to })}>
         {hasArrived && (
           <Text as="p" size="2" role="status">
@@ -80,7 +84,7 @@ export function MessageForm({ draftKey, to, onSend, onEarlierArrived }: MessageF
           control={form.control}
           name="body"
           label={t('message', { name: to })}
-          lines={3}
+          lines={2}
           maxLength={4000}
         />
         <FileThumbs

@@ -48,7 +48,11 @@ function Threads({ scopeId }: { scopeId: string }) {
                 className={styles.row}
                 aria-expanded={isOpen}
                 aria-controls={isOpen ? panelId : undefined}
-                onClick={() => setOpenId(isOpen ? null : thread.id)}
+                onClick={(event) => {
+                  // What was said last comes onto the screen, or it would not count as seen.
+                  if (!isOpen) event.currentTarget.scrollIntoView({ block: 'start' });
+                  setOpenId(isOpen ? null : thread.id);
+                }}
               >
                 <ThreadSummary thread={thread} />
               </button>
