@@ -1,5 +1,6 @@
 // A picture of every page in every role, at a desk and on a phone, light and dark. Started by `npm run pictures`, which
 // gives it a demo of its own (BASE_URL); the pictures go to pictures/ beside the packages, which git ignores.
+/* global document -- inside the pages */
 import { chromium } from '@playwright/test';
 import { existsSync, mkdirSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
@@ -17,6 +18,8 @@ const schemes = ['light', 'dark'];
 
 /** Where nobody is signed in; nothing leads to some of these. */
 const publicPaths = ['/', '/sign-in', '/sign-up?as=gc', '/sign-up?as=crew', '/verify?token=used', '/no-such-page'];
+/** For everybody signed in; menus lead to some of these, and links do not. */
+const signedInPaths = ['/', '/account', '/calculators'];
 /** Opening it begins a scope, so it is left to people. */
 const leftOut = ['/scopes/new'];
 /** Pages of one kind that differ in what they hold, for owners and staff; one for everybody else. */
@@ -93,7 +96,7 @@ async function picture(page, { role, name, width, scheme }) {
 async function discover(page, role) {
   const limit = /owner|staff/.test(role) ? EXAMPLES : 1;
   const isSignedOut = role === 'signed-out';
-  const waiting = isSignedOut ? [...publicPaths] : [new URL(page.url()).origin + '/'];
+  const waiting = isSignedOut ? [...publicPaths] : [...signedInPaths];
   const seen = new Map();
   const found = [];
   const known = new Set();
@@ -101,7 +104,7 @@ async function discover(page, role) {
     const path = waiting.shift();
     await rest(page, path);
     const { pathname, search } = new URL(page.url());
-    const here = pathname + (isSignedOut ? search : '');
+    const here = pathname + search;
     const example = (seen.get(kindOf(here)) ?? 0) + 1;
     if (known.has(here) || leftOut.includes(pathname) || (!isSignedOut && example > limit)) continue;
     known.add(here);
@@ -117,12 +120,14 @@ async function discover(page, role) {
   return found;
 }
 
-/** Where the page leads inside the app, without what follows a question mark. */
+/** Where the page leads inside the app. */
 async function linksOn(page) {
   const addresses = await page.locator('a[href]').evaluateAll((links) => links.map((link) => link.href));
   const { origin } = new URL(page.url());
   const inside = addresses.map((address) => new URL(address)).filter((url) => url.origin === origin);
-  return [...new Set(inside.map((url) => url.pathname))].filter((path) => !path.startsWith('/api/'));
+  return [...new Set(inside.map((url) => url.pathname + url.search))].filter(
+    (path) => !path.startsWith('/api/'),
+  );
 }
 
 async function pictureRole(browser, { baseURL, role, key }) {
