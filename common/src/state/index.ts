@@ -43,11 +43,3 @@ export function nextState<State extends string, Action extends string>(
 ): State | undefined {
   return machine.moves[from][action];
 }
-
-/** All states from which an action is allowed: the `WHERE status IN (…)` of a conditional update. */
-export function statesAllowing<State extends string, Action extends string>(
-  machine: Machine<State, Action>,
-  action: Action,
-): State[] {
-  return machine.states.filter((state) => machine.moves[state][action] !== undefined);
-}

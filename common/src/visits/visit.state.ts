@@ -12,6 +12,3 @@ export const visitMachine = defineMachine({
   },
 });
 export type VisitStatus = keyof typeof visitMachine.moves;
-
-/** In these states a visit holds its crew and truck; the database forbids two such windows to overlap. */
-export const bookedVisitStates: readonly VisitStatus[] = ['confirmed', 'on_site', 'finished'];
