@@ -84,7 +84,9 @@ export function cutDetails(cut: CutData): string {
 function jointDetails(cut: Extract<CutData, { kind: 'joints' }>): string[] {
   const { maxAspect, baysAlongLengthFt, baysAlongWidthFt } = cut;
   const bays = (side: string, baysFt: readonly number[] | undefined) =>
-    baysFt === undefined ? [] : [`column bays along the ${side} ${baysFt.map((bay) => figure(bay)).join(', ')} ft`];
+    baysFt === undefined
+      ? []
+      : [`column bays along the ${side} ${baysFt.map((bay) => figure(bay)).join(', ')} ft`];
   return [
     `spacing ${figure(cut.spacingFactor)} thicknesses, at most ${figure(cut.capFt)} ft`,
     ...(maxAspect === undefined ? [] : [`panels at most ${figure(maxAspect)} to 1`]),
