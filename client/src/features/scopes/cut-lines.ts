@@ -1,4 +1,4 @@
-import type { CutTakeoff } from '@kerfyard/common/cutting';
+import { openingSides, type CutTakeoff, type OpeningSide } from '@kerfyard/common/cutting';
 import {
   cutKinds,
   cutSchema,
@@ -53,6 +53,12 @@ export const fieldsOfKind: Record<DraftKind, readonly NumberFieldOfCut[]> = {
   lip: [width, height, { name: 'runPerRise', unit: 'to 1' }],
 };
 
+/** Sides of an opening that are left uncut, as typed so far. */
+export function uncutSidesOf({ cut }: DraftCut): OpeningSide[] {
+  const typed: readonly unknown[] = Array.isArray(cut.uncutSides) ? cut.uncutSides : [];
+  return openingSides.filter((side) => typed.includes(side));
+}
+
 /** What a new cut of a kind begins with, beside a count of one. */
 const startOfKind: Partial<Record<DraftKind, CutFields>> = {
   trench: { sideCuts: 2, endCuts: 2 },
@@ -79,14 +85,21 @@ const letterOfKind: Record<DraftKind, string> = {
   lip: 'E',
 };
 
+const detailFields: ReadonlySet<string> = new Set([
+  'sideCuts',
+  'endCuts',
+  'uncutSides',
+  'corners',
+  'bladeDiameterIn',
+  'passThroughIn',
+  'closed',
+  'maxAspect',
+]);
+
 /** Fields that stand in a line's details, which open by themselves when one of them needs another look. */
 export function isDetailField(field: string): boolean {
   return (
-    field === 'note' ||
-    ['sideCuts', 'endCuts', 'uncutSides', 'corners', 'bladeDiameterIn', 'passThroughIn', 'closed'].includes(
-      field,
-    ) ||
-    field.startsWith('removal')
+    field === 'note' || detailFields.has(field) || field.startsWith('removal') || field.startsWith('bays')
   );
 }
 
@@ -162,10 +175,15 @@ function readFresh(draft: DraftCut): CutReading {
     return {
       state: 'refused',
       errors: Object.fromEntries(
-        reading.issues.map(({ path, message }) => [path.replace('cuts.0.cut.', ''), message]),
+        reading.issues.map(({ path, message }) => [fieldOfPath(path.replace('cuts.0.cut.', '')), message]),
       ),
     };
   }
   const takeoff = reading.byCutId.get(line.id);
   return takeoff === undefined ? { state: 'half' } : { state: 'whole', line, takeoff };
+}
+
+/** Bays are typed in one field: a complaint about one of them is shown there. */
+export function fieldOfPath(path: string): string {
+  return path.replace(/(bays\w+)\.\d+$/, '$1');
 }

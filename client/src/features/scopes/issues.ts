@@ -1,4 +1,5 @@
 import type { FieldIssue } from '@kerfyard/common/errors';
+import { fieldOfPath } from './cut-lines.ts';
 
 /** What is wrong with a draft, sorted to where it is shown. */
 export interface SortedIssues {
@@ -42,7 +43,7 @@ export function sortIssues(issues: readonly FieldIssue[]): SortedIssues {
 /** Position and zone have no fields of their own until they are moved by hand: the ZIP code leads to them. */
 function toShownField(issue: FieldIssue): FieldIssue {
   const isPlace = ['site.lat', 'site.lon', 'site.timeZone'].includes(issue.path);
-  return isPlace ? { ...issue, path: 'site.zip' } : issue;
+  return { ...issue, path: isPlace ? 'site.zip' : fieldOfPath(issue.path) };
 }
 
 function uniquePaths(issues: readonly FieldIssue[]): FieldIssue[] {

@@ -9,7 +9,7 @@ import { RowsInput, said } from './rows-input.tsx';
 
 interface CalculatorFormProps {
   calculator: Calculator;
-  inputs: Inputs;
+  inputs: Pick<Inputs, 'raw' | 'set'>;
   problems: Problems;
 }
 

@@ -1,13 +1,12 @@
-import { Button, Heading, Text } from '@radix-ui/themes';
-import { memo, useDeferredValue, useMemo, useState, type ReactNode } from 'react';
+import { Button } from '@radix-ui/themes';
+import { useDeferredValue, useMemo, useState } from 'react';
 import { useTranslation } from 'react-i18next';
 import { useAnnounce } from '../../../components/announcer.tsx';
 import type { Calculator } from '../calculator.ts';
-import { evaluate, type Evaluated } from '../evaluate.ts';
+import { evaluate } from '../evaluate.ts';
 import { useInputsInAddress } from '../hooks/use-inputs-in-address.ts';
 import { CalculatorForm } from './calculator-form.tsx';
-import { Cautions, Sources } from './calculator-notes.tsx';
-import { CalculatorResults } from './calculator-results.tsx';
+import { CalculatorFound } from './calculator-found.tsx';
 import styles from './calculators.module.css';
 
 /** One calculator: its fields, and beside them the drawing, the results with their working, sources and cautions. */
@@ -37,55 +36,7 @@ export function CalculatorView({
           )}
         </div>
       </div>
-      <Found calculator={calculator} evaluated={evaluated} />
-    </div>
-  );
-}
-
-/** Drawing, results, cautions and sources of what is typed. */
-const Found = memo(function Found({
-  calculator,
-  evaluated,
-}: {
-  calculator: Calculator;
-  evaluated: Evaluated;
-}) {
-  const { t } = useTranslation('calculators');
-  const { result, values, problems, refused } = evaluated;
-  return (
-    <section className={styles.found} aria-labelledby="found">
-      <Heading as="h2" size="4" weight="medium" id="found">
-        {t('found')}
-      </Heading>
-      {result === null ? (
-        <NothingFound count={Object.keys(problems).length} refused={refused} />
-      ) : (
-        <>
-          <Drawing>{calculator.draw?.(values as never)}</Drawing>
-          <CalculatorResults name={calculator.name} result={result} />
-        </>
-      )}
-      <Cautions calculator={calculator} result={result} />
-      {result !== null && <Sources result={result} />}
-    </section>
-  );
-});
-
-function Drawing({ children }: { children: ReactNode }) {
-  return children === undefined ? null : <div className={styles.drawing}>{children}</div>;
-}
-
-/** No number is better than a wrong one: which field keeps it from counting stands beside that field. */
-function NothingFound({ count, refused }: { count: number; refused: string | null }) {
-  const { t } = useTranslation('calculators');
-  return (
-    <div className={styles.nothing} role="status">
-      <Text as="p" weight="medium">
-        {refused === null ? t('nothing', { count }) : t('refused')}
-      </Text>
-      <Text as="p" size="2" color="gray">
-        {refused ?? t('nothingNext')}
-      </Text>
+      <CalculatorFound calculator={calculator} evaluated={evaluated} />
     </div>
   );
 }

@@ -1,4 +1,4 @@
-import { bladeReach, cornerChoices, CuttingInputError, type CornerChoice } from '@kerfyard/common/cutting';
+import { bladeReach, openingSides, type OpeningSide } from '@kerfyard/common/cutting';
 import { Text } from '@radix-ui/themes';
 import { useId, type ReactNode } from 'react';
 import { useTranslation } from 'react-i18next';
@@ -6,13 +6,15 @@ import { FieldNotes } from '../../../../components/form/field-frame.tsx';
 import formStyles from '../../../../components/form/form.module.css';
 import { Figure } from '../../../../components/figure.tsx';
 import { formatNumber } from '../../../../lib/format.ts';
-import { kindOf, readCut, type DraftCut } from '../../cut-lines.ts';
+import { kindOf, readCut, uncutSidesOf, type DraftCut } from '../../cut-lines.ts';
+import { CornerFields } from './corner-fields.tsx';
 import { CutInput } from './cut-input.tsx';
 import styles from './cut-list.module.css';
 import type { CutErrors } from './cut-row.tsx';
+import { JointFields } from './joint-fields.tsx';
 import type { CutListChange } from './use-cut-list.ts';
 
-interface CutDetailsProps {
+export interface CutDetailsProps {
   line: DraftCut;
   index: number;
   errors: CutErrors;
@@ -29,8 +31,9 @@ export function CutDetails(props: CutDetailsProps) {
       {kind === 'trench' && <TrenchSides {...props} />}
       {kind === 'opening' && <UncutSides {...props} />}
       {isPanel && <Blade {...props} />}
-      {kind === 'opening' && <Corners {...props} />}
+      {kind === 'opening' && <CornerFields line={props.line} index={props.index} change={props.change} />}
       {isPanel && <Removal {...props} />}
+      {kind === 'joints' && <JointFields {...props} />}
       {kind === 'stitch' && <ClosedLoop {...props} />}
       <Note {...props} />
     </div>
@@ -65,13 +68,11 @@ function TrenchSides({ line, change }: CutDetailsProps) {
   );
 }
 
-const sides = ['top', 'bottom', 'left', 'right'] as const;
-
 function UncutSides({ line, errors, change }: CutDetailsProps) {
   const { t } = useTranslation('scopes');
   const id = useId();
-  const uncut = Array.isArray(line.cut.uncutSides) ? line.cut.uncutSides : [];
-  const toggle = (side: string) => {
+  const uncut = uncutSidesOf(line);
+  const toggle = (side: OpeningSide) => {
     const next = uncut.includes(side) ? uncut.filter((one) => one !== side) : [...uncut, side];
     change({ type: 'figure', id: line.id, field: 'uncutSides', value: next });
   };
@@ -79,7 +80,7 @@ function UncutSides({ line, errors, change }: CutDetailsProps) {
     <fieldset className={styles.choices}>
       <legend className={styles.label}>{t('cuts.fields.uncutSides')}</legend>
       <div className={styles.inline}>
-        {sides.map((side) => (
+        {openingSides.map((side) => (
           <label key={side} className={styles.tick}>
             <input type="checkbox" checked={uncut.includes(side)} onChange={() => toggle(side)} />
             {t(`cuts.sides.${side}`)}
@@ -130,84 +131,6 @@ function Blade({ line, index, errors, onFigure }: CutDetailsProps) {
 function bladeReaching(thickness: unknown): { diameterIn: number; reachIn: number } | null {
   if (typeof thickness !== 'number') return null;
   return bladeReach.rows.wall.find((row) => row.reachIn >= thickness) ?? null;
-}
-
-function Corners({ line, index, change }: CutDetailsProps) {
-  const { t } = useTranslation('scopes');
-  const known = choicesOf(line);
-  return (
-    <fieldset className={styles.choices}>
-      <legend className={styles.label}>{t('cuts.fields.corners')}</legend>
-      <div className={styles.corners}>
-        {(['overcut', 'cored', 'square'] as const).map((corners) => (
-          <label key={corners} className={formStyles.card}>
-            <input
-              type="radio"
-              name={`cuts.${index}.cut.corners`}
-              checked={line.cut.corners === corners}
-              onChange={() => change({ type: 'figure', id: line.id, field: 'corners', value: corners })}
-            />
-            <span>{t(`cuts.corners.${corners}.name`)}</span>
-            <CornerCost
-              choice={known?.choices.find((choice) => choice.corners === corners)}
-              corners={corners}
-            />
-          </label>
-        ))}
-      </div>
-      {known !== null && (
-        <Text as="p" size="2" color="gray">
-          {t('cuts.overcutIs')}{' '}
-          <Figure
-            label={t('cuts.overcut')}
-            value={known.overcutIn}
-            unit="in"
-            size="small"
-            digits={2}
-            working={known.working}
-          />
-        </Text>
-      )}
-    </fieldset>
-  );
-}
-
-function CornerCost({ choice, corners }: { choice: CornerChoice | undefined; corners: string }) {
-  const { t } = useTranslation('scopes');
-  if (choice === undefined)
-    return <span className={formStyles.hint}>{t(`cuts.corners.${corners}.note`)}</span>;
-  const feet = corners === 'overcut' ? choice.overcutFt : choice.squareFinishFt;
-  return (
-    <span className={formStyles.hint}>
-      {corners === 'cored'
-        ? t('cuts.corners.cored.comes', {
-            count: choice.coreHoles,
-            diameter: formatNumber(choice.coreDiameterIn, 1),
-          })
-        : t(`cuts.corners.${corners}.comes`, { feet: formatNumber(feet, 1) })}
-    </span>
-  );
-}
-
-/** The three ways side by side, once thickness and blade are there and the blade goes through. */
-function choicesOf({ cut }: DraftCut): ReturnType<typeof cornerChoices> | null {
-  const { thicknessIn, bladeDiameterIn, passThroughIn, uncutSides, count } = cut;
-  if (typeof thicknessIn !== 'number' || typeof bladeDiameterIn !== 'number' || typeof count !== 'number') {
-    return null;
-  }
-  try {
-    return cornerChoices({
-      thicknessIn,
-      bladeDiameterIn,
-      count,
-      ...(typeof passThroughIn === 'number' ? { passThroughIn } : {}),
-      ...(Array.isArray(uncutSides) ? { uncutSides: sides.filter((side) => uncutSides.includes(side)) } : {}),
-    });
-  } catch (error) {
-    // The field beside it says what the engine does not take.
-    if (error instanceof CuttingInputError) return null;
-    throw error;
-  }
 }
 
 const removalFields = [

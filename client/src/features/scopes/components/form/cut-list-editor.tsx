@@ -6,6 +6,8 @@ import { useAnnounce } from '../../../../components/announcer.tsx';
 import { FieldNotes } from '../../../../components/form/field-frame.tsx';
 import type { DraftCut, DraftKind } from '../../cut-lines.ts';
 import styles from './cut-list.module.css';
+import { PlanButton } from './plan-button.tsx';
+import type { PlannedKind } from './planners.ts';
 import { CutRow, type CutErrors } from './cut-row.tsx';
 import { isFull, type CutListChange } from './use-cut-list.ts';
 
@@ -67,7 +69,11 @@ export const CutListEditor = memo(function CutListEditor(props: CutListEditorPro
         </ol>
       )}
       <FieldNotes id="cuts" hint={undefined} error={error} />
-      <AddButtons isFull={isFull(lines)} onAdd={(kind) => changeAndFollow({ type: 'add', kind })} />
+      <AddButtons
+        isFull={isFull(lines)}
+        onAdd={(kind) => changeAndFollow({ type: 'add', kind })}
+        onPlan={(kind, figures) => changeAndFollow({ type: 'add', kind, figures })}
+      />
       <Text as="p" size="1" color="gray">
         {isFull(lines) ? t('cuts.full', { count: MAX_CUT_LINES }) : t('cuts.keys')}
       </Text>
@@ -79,7 +85,13 @@ export const CutListEditor = memo(function CutListEditor(props: CutListEditorPro
 const usualKinds = ['line', 'trench', 'opening', 'core'] as const satisfies readonly DraftKind[];
 const otherKinds = cutKinds.filter((kind) => !usualKinds.some((usual) => usual === kind));
 
-function AddButtons(props: { isFull: boolean; onAdd: (kind: DraftKind) => void }) {
+const plannedKinds = ['trench', 'joints'] as const satisfies readonly PlannedKind[];
+
+function AddButtons(props: {
+  isFull: boolean;
+  onAdd: (kind: DraftKind) => void;
+  onPlan: (kind: PlannedKind, figures: DraftCut['cut']) => void;
+}) {
   const { t } = useTranslation('scopes');
   // The menu gives the focus back to its button; the new line asks for it afterwards.
   const chosen = useRef<DraftKind | null>(null);
@@ -126,6 +138,27 @@ function AddButtons(props: { isFull: boolean; onAdd: (kind: DraftKind) => void }
           ))}
         </DropdownMenu.Content>
       </DropdownMenu.Root>
+      {plannedKinds.map((kind) => (
+        <PlanButton
+          key={kind}
+          kind={kind}
+          line={null}
+          onWrite={(figures) => props.onPlan(kind, figures)}
+          button={(opener) => (
+            <Button
+              {...opener}
+              type="button"
+              variant="outline"
+              color="gray"
+              size="3"
+              aria-haspopup="dialog"
+              disabled={props.isFull}
+            >
+              {t(`cuts.plan.${kind}`)}
+            </Button>
+          )}
+        />
+      ))}
     </div>
   );
 }

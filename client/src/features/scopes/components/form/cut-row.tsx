@@ -16,6 +16,8 @@ import {
 import { CutDetails } from './cut-details.tsx';
 import { CutInput } from './cut-input.tsx';
 import styles from './cut-list.module.css';
+import { PlanButton } from './plan-button.tsx';
+import { isPlanned } from './planners.ts';
 import type { CutListChange } from './use-cut-list.ts';
 
 /** Complaints about one line by field: `mark`, `note`, `depthIn`, `removal.maxPieceLb`. */
@@ -38,6 +40,8 @@ export const CutRow = memo(function CutRow({ line, index, errors, change }: CutR
     reading.state === 'refused' ? { ...reading.errors, ...errors } : (errors ?? noErrors);
   const needsDetails = Object.keys(said).some(isDetailField);
   const [wanted, setWanted] = useState(false);
+  // Opened by a complaint they stay open once it is answered: someone is typing in there.
+  if (needsDetails && !wanted) setWanted(true);
   const open = wanted || needsDetails;
   const kind = kindOf(line);
   const { id } = line;
@@ -82,6 +86,24 @@ export const CutRow = memo(function CutRow({ line, index, errors, change }: CutR
       </div>
       <div className={styles.sum}>
         <Quantities line={line} />
+        {isPlanned(kind) && (
+          <PlanButton
+            kind={kind}
+            line={line}
+            onWrite={(figures) => change({ type: 'figures', id, figures })}
+            button={(opener) => (
+              <button
+                {...opener}
+                type="button"
+                className={`${styles.more} ${styles.plan}`}
+                aria-haspopup="dialog"
+                aria-label={t('cuts.plan.of', words)}
+              >
+                {t('cuts.plan.short')}
+              </button>
+            )}
+          />
+        )}
         <button
           type="button"
           className={styles.more}

@@ -25,6 +25,7 @@ import { ConditionFields } from './condition-fields.tsx';
 import { CutListEditor } from './cut-list-editor.tsx';
 import listStyles from './cut-list.module.css';
 import { CutQuantities } from './cut-quantities.tsx';
+import { MethodPicker } from './method-picker.tsx';
 import { PublishBar } from './publish-bar.tsx';
 import { ResponsibilityFields } from './responsibility-fields.tsx';
 import { ScopeFiles } from './scope-files.tsx';
@@ -134,6 +135,9 @@ function Sections(props: {
       </FormSection>
       <FormSection title={t('conditions.title')}>
         <ConditionFields lines={settledLines} />
+      </FormSection>
+      <FormSection title={t('methods.title')} lead={t('methods.lead')}>
+        <MethodPicker lines={settledLines} />
       </FormSection>
       <FormSection title={t('files.title')} lead={t('files.lead')}>
         <ScopeFiles scopeId={scope.id} files={scope.files} />

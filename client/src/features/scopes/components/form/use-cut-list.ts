@@ -4,7 +4,7 @@ import { duplicateCut, kindOf, newCut, withKind, type DraftCut, type DraftKind }
 
 /** Everything that happens to a cut list while it is typed. */
 export type CutListChange =
-  | { type: 'add'; kind: DraftKind }
+  | { type: 'add'; kind: DraftKind; figures?: DraftCut['cut'] }
   /** The same kind again, below this line. */
   | { type: 'addBelow'; id: string }
   | { type: 'duplicate'; id: string }
@@ -14,6 +14,8 @@ export type CutListChange =
   | { type: 'kind'; id: string; kind: DraftKind }
   /** `field` of the cut, or `removal.maxPieceLb` and the like. */
   | { type: 'figure'; id: string; field: string; value: DraftCut['cut'][string] }
+  /** Several figures at once, as a plan has them. */
+  | { type: 'figures'; id: string; figures: DraftCut['cut'] }
   | { type: 'removal'; id: string; isWanted: boolean }
   | { type: 'replace'; lines: readonly DraftCut[] };
 
@@ -30,7 +32,7 @@ export function changed(lines: readonly DraftCut[], change: CutListChange): read
     case 'replace':
       return change.lines;
     case 'add':
-      return isFull(lines) ? lines : [...lines, newCut(change.kind, lines)];
+      return isFull(lines) ? lines : [...lines, addedCut(change, lines)];
     case 'addBelow':
       return insertBelow(lines, change.id, (line) => newCut(kindOf(line), lines));
     case 'duplicate':
@@ -46,6 +48,11 @@ export function isFull(lines: readonly DraftCut[]): boolean {
   return lines.length >= MAX_CUT_LINES;
 }
 
+function addedCut(change: Extract<CutListChange, { type: 'add' }>, lines: readonly DraftCut[]): DraftCut {
+  const line = newCut(change.kind, lines);
+  return { ...line, cut: { ...line.cut, ...change.figures } };
+}
+
 function insertBelow(
   lines: readonly DraftCut[],
   id: string,
@@ -57,7 +64,10 @@ function insertBelow(
   return [...lines.slice(0, at + 1), make(line), ...lines.slice(at + 1)];
 }
 
-type LineChange = Extract<CutListChange, { type: 'mark' | 'note' | 'kind' | 'figure' | 'removal' }>;
+type LineChange = Extract<
+  CutListChange,
+  { type: 'mark' | 'note' | 'kind' | 'figure' | 'figures' | 'removal' }
+>;
 
 function changedLine(line: DraftCut, change: LineChange, lines: readonly DraftCut[]): DraftCut {
   switch (change.type) {
@@ -69,6 +79,8 @@ function changedLine(line: DraftCut, change: LineChange, lines: readonly DraftCu
       return withKind(line, change.kind, lines);
     case 'removal':
       return { ...line, cut: { ...line.cut, removal: change.isWanted ? usualRemoval : null } };
+    case 'figures':
+      return { ...line, cut: { ...line.cut, ...change.figures } };
     case 'figure':
       return { ...line, cut: withField(line.cut, change.field, change.value) };
   }
