@@ -40,7 +40,11 @@ function Threads({ hasOpen }: { hasOpen: boolean }) {
   }
   const items = threads.data.pages.flatMap((page) => page.items);
   if (items.length === 0) {
-    return <EmptyState drawing={<TalkDrawing />} title={t('empty')} text={t('emptyText')} />;
+    return (
+      <div className={styles.whole}>
+        <EmptyState drawing={<TalkDrawing />} title={t('empty')} text={t('emptyText')} />
+      </div>
+    );
   }
   return (
     <>

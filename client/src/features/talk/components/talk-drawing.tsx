@@ -1,7 +1,9 @@
+import styles from './talk.module.css';
+
 /** What the page will hold: entries of two sides, words and a photo of a marked wall. Decoration beside words. */
 export function TalkDrawing() {
   return (
-    <svg viewBox="0 0 340 120" width="340" aria-hidden="true" focusable="false">
+    <svg viewBox="0 0 340 120" className={styles.drawing} aria-hidden="true" focusable="false">
       <g fill="none" stroke="var(--k-line-strong)" strokeWidth="2" strokeLinecap="round">
         <path d="M28 18h70M28 32h150" />
         <path d="M28 104h96" />
