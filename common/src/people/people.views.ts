@@ -2,7 +2,7 @@ import type { Actor, CompanyKind, Role } from './roles.ts';
 import type { Method } from './people.schema.ts';
 import type { PermissionName } from './permissions.ts';
 
-/** `GET /api/auth/me`: who is signed in, and until when the session lasts without use. */
+/** `GET /api/auth/me`: who is signed in, and what they may do. */
 export interface MeView {
   user: { id: string; name: string; email: string; isStaff: boolean };
   company: { id: string; kind: CompanyKind; name: string } | null;
