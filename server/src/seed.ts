@@ -1,4 +1,5 @@
 import { writeFileSync } from 'node:fs';
+import type { Server } from 'node:http';
 import { Client } from 'pg';
 import { bootstrap } from './bootstrap.ts';
 import { DEMO_PASSWORD, demoCompanies, demoStaff, emailOf } from './demo/seed/cast.ts';
@@ -55,6 +56,9 @@ async function seed(): Promise<void> {
   if (!(await isEmpty(ownerUrl))) return console.log('The database is not empty; nothing was changed.');
   const app = await bootstrap(config);
   await app.listen(config.port, config.host);
+  // Drawing pictures holds this process up for seconds; a connection closed for idleness meanwhile would fail the next
+  // request, which the demo's people, being in the same process, could not know.
+  (app.getHttpServer() as Server).keepAliveTimeout = 0;
   const world = await DemoWorld.open(config, ownerUrl);
   try {
     await tellDemoStory(world, (line) => console.log(line));
@@ -67,6 +71,6 @@ async function seed(): Promise<void> {
 try {
   await seed();
 } catch (error) {
-  console.error(error instanceof Error ? error.stack : error);
+  console.error(error); // with its cause, which a failed request hides behind "fetch failed"
   process.exitCode = 1;
 }
