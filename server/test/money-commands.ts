@@ -78,7 +78,7 @@ abstract class Step implements fc.AsyncCommand<Model, Real> {
   }
 }
 
-class SetAside extends Step {
+export class SetAside extends Step {
   readonly name = `set aside ${this.mask.toString(2)}`;
   constructor(private readonly mask: number) {
     super();
@@ -109,7 +109,7 @@ class SetAside extends Step {
 const openOnes = (model: Readonly<Model>) => model.fundings.filter(({ fate }) => fate === 'open');
 const pick = <T>(list: readonly T[], number: number): T => list[number % list.length]!;
 
-class Pay extends Step {
+export class Pay extends Step {
   readonly name = `pay ${this.number} ${this.isGood ? 'well' : 'badly'}`;
   constructor(
     private readonly number: number,
@@ -181,7 +181,7 @@ class RunJobs extends Step {
 }
 
 /** The general contractor accepts lines of work that are set aside. */
-class Accept extends Step {
+export class Accept extends Step {
   readonly name = `accept ${this.mask.toString(2)}`;
   constructor(private readonly mask: number) {
     super();
@@ -304,7 +304,7 @@ const dayPasses = async (model: Model, real: Real) => {
 const fault = fc
   .record({
     kind: fc.constantFrom('drop_before', 'drop_after', '500', '409', '429'),
-    path: fc.constantFrom('/v1/transfers', '/v1/checkout/sessions'),
+    path: fc.constantFrom('/v1/transfers', '/v1/transfers', '/v1/checkout/sessions'),
     hasEffect: fc.boolean(),
   })
   .map(
@@ -333,8 +333,10 @@ export const steps = [
   number.map((one) => new Expire(one)),
   fc.record({ picks, isTwice: fc.boolean() }).map((one) => new RunJobs(one.picks, one.isTwice)),
   fc.record({ picks, isTwice: fc.boolean() }).map((one) => new RunJobs(one.picks, one.isTwice)),
+  fc.record({ picks, isTwice: fc.boolean() }).map((one) => new RunJobs(one.picks, one.isTwice)),
   plain('poll events', (_, { money }) => money.events.poll()),
   mask.map((one) => new Accept(one)),
+  number.map((one) => new Release(one)),
   number.map((one) => new Release(one)),
   plain('crew ready', makeAccountReady, (model) => model.account !== 'ready'),
   plain('crew lapses', lapse, (model) => model.account === 'ready'),
@@ -351,5 +353,6 @@ export const steps = [
     const differences = await money.reconciliation.compare();
     require(differences.length === 0, `the provider differs: ${JSON.stringify(differences)}`);
   }),
+  fault,
   fault,
 ];
