@@ -13,8 +13,9 @@ import styles from './talk-link.module.css';
 export function TalkLink() {
   const { t } = useTranslation();
   useTalkHints();
-  const count = useQuery(unreadQuery).data?.messages ?? 0;
-  useAnnounceMore(count);
+  const known = useQuery(unreadQuery).data?.messages;
+  useAnnounceMore(known);
+  const count = known ?? 0;
   return (
     <NavLink to={paths.talk} className={styles.link}>
       <NavPicture name="talk" />
@@ -30,12 +31,13 @@ export function TalkLink() {
 }
 
 /** Said when more wait than before, not when they are read. */
-function useAnnounceMore(count: number): void {
+function useAnnounceMore(count: number | undefined): void {
   const { t } = useTranslation();
   const announce = useAnnounce();
-  const before = useRef<number | null>(null);
+  const before = useRef<number | undefined>(undefined);
   useEffect(() => {
-    if (before.current !== null && count > before.current) announce(t('waiting', { count }));
+    if (count === undefined) return;
+    if (before.current !== undefined && count > before.current) announce(t('waiting', { count }));
     before.current = count;
   }, [count, announce, t]);
 }
