@@ -44,6 +44,7 @@ export async function migrate(ownerUrl: string, log: (line: string) => void): Pr
   }
 }
 
+/** The runner of the migrations over one connection pool: all up, or (for developers and tests) down again. */
 export function umzug(sequelize: Sequelize, log: (line: string) => void): Umzug<Sequelize> {
   const storage: UmzugStorage<Sequelize> = {
     executed: async () => {

@@ -2,7 +2,7 @@ import type { ErrorCode } from '@kerfyard/common/errors';
 import { AppError } from '../http/app-error.ts';
 
 /** The one place where a constraint's name becomes an answer for people. */
-const codes: Record<string, ErrorCode> = {
+export const constraintCodes: Readonly<Record<string, ErrorCode>> = {
   app_user_email_key: 'has_account',
   award_one_standing: 'already_awarded',
   visit_crew_once: 'window_taken',
@@ -19,6 +19,6 @@ const codes: Record<string, ErrorCode> = {
 export function databaseErrorToAppError(error: unknown): AppError | null {
   const original = (error as { original?: { constraint?: unknown } } | null)?.original;
   const name = typeof original?.constraint === 'string' ? original.constraint : '';
-  const code = codes[name];
+  const code = constraintCodes[name];
   return code === undefined ? null : new AppError(code);
 }
