@@ -45,11 +45,17 @@ export function methodFits(verdictsOfCuts: readonly (readonly MethodVerdict[])[]
       const verdict = verdicts.find((one) => one.method === method);
       if (verdict === undefined) continue;
       if (verdict.ok) fits.push(place);
-      for (const text of verdict.reasons) reasons.set(text, [...(reasons.get(text) ?? []), place]);
-      for (const text of verdict.cautions) cautions.set(text, [...(cautions.get(text) ?? []), place]);
+      for (const text of verdict.reasons) note(reasons, text, place);
+      for (const text of verdict.cautions) note(cautions, text, place);
     }
     return { method, fits, reasons: saidOf(reasons), cautions: saidOf(cautions) };
   });
+}
+
+function note(said: Map<string, number[]>, text: string, place: number): void {
+  const places = said.get(text);
+  if (places === undefined) said.set(text, [place]);
+  else places.push(place);
 }
 
 function saidOf(said: ReadonlyMap<string, readonly number[]>): SaidOfCuts[] {

@@ -1,6 +1,7 @@
 import {
   conditionsSchema,
   methodFits,
+  methodQuestion,
   methodVerdicts,
   type CutLine,
   type CutPlace,
@@ -33,11 +34,13 @@ export const MethodPicker = memo(function MethodPicker({ lines }: { lines: reado
   const place = placeOf(conditions);
   // The same place by value, whatever else of the conditions is typed.
   const key = JSON.stringify(place);
-  const fits = useMemo(() => {
-    const known = JSON.parse(key) as CutPlace | null;
-    if (known === null || whole.length === 0) return null;
-    return methodFits(whole.map((line) => verdictsOf(line.cut, known, key)));
-  }, [whole, key]);
+  const verdicts = useSameItems(
+    useMemo(() => {
+      const known = JSON.parse(key) as CutPlace | null;
+      return known === null ? [] : whole.map((line) => verdictsOf(line.cut, known));
+    }, [whole, key]),
+  );
+  const fits = useMemo(() => (verdicts.length === 0 ? null : methodFits(verdicts)), [verdicts]);
   if (fits === null) {
     return (
       <Text as="p" size="2" color="gray">
@@ -144,15 +147,29 @@ function wholeLines(lines: readonly DraftCut[]): CutLine[] {
 
 type Verdicts = ReturnType<typeof methodVerdicts>;
 
-// A cut is judged once for as long as neither it nor the place changes, however long the list.
-const judged = new WeakMap<CutLine['cut'], { key: string; verdicts: Verdicts }>();
+// Cuts that ask the same share one verdict: a length changes none, however long the list.
+const judged = new Map<string, Verdicts>();
+const MOST_JUDGED = 2000;
 
-function verdictsOf(cut: CutLine['cut'], place: CutPlace, key: string): Verdicts {
-  const known = judged.get(cut);
-  if (known?.key === key) return known.verdicts;
+function verdictsOf(cut: CutLine['cut'], place: CutPlace): Verdicts {
+  const ownCores = (cut.kind === 'opening' && cut.corners) || (cut.kind === 'wire' && cut.pilotCores > 0);
+  const question = JSON.stringify([methodQuestion(cut, place), ownCores]);
+  const known = judged.get(question);
+  if (known !== undefined) return known;
   const verdicts = methodVerdicts(cut, place);
-  judged.set(cut, { key, verdicts });
+  if (judged.size >= MOST_JUDGED) judged.clear();
+  judged.set(question, verdicts);
   return verdicts;
+}
+
+/** The very same list for as long as each of its items is the same. */
+function useSameItems<Item>(items: readonly Item[]): readonly Item[] {
+  const [kept, setKept] = useState(items);
+  if (kept === items) return kept;
+  const isSame = kept.length === items.length && kept.every((item, index) => item === items[index]);
+  if (isSame) return kept;
+  setKept(items);
+  return items;
 }
 
 const placeSchema = conditionsSchema.pick({

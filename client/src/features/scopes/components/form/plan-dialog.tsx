@@ -41,6 +41,8 @@ export function PlanDialog(props: PlanDialogProps & { calculator: Calculator }) 
     <Dialog.Root open onOpenChange={(open) => !open && close()}>
       <Dialog.Content
         maxWidth="68rem"
+        // It scrolls in itself, so that its buttons stay at its foot.
+        maxHeight="calc(100dvh - 4rem)"
         className={styles.dialog ?? ''}
         onCloseAutoFocus={(event) => {
           event.preventDefault();
