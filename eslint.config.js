@@ -69,6 +69,10 @@ const homes = {
     selector: "JSXAttribute[name.name='dangerouslySetInnerHTML']",
     message: 'Markup from data is a way in for scripts; render elements.',
   },
+  words: {
+    selector: 'JSXText[value=/^(?!\\s*Kerfyard\\s*$)[^]*[A-Za-z]{2}/]',
+    message: 'Words on screens come from client/src/locales.',
+  },
   templateSql: {
     selector:
       "CallExpression[callee.property.name='query'][arguments.0.type='TemplateLiteral'][arguments.0.expressions.length>0]",
@@ -201,7 +205,7 @@ export default tseslint.config(
     files: ['client/src/**/*.{ts,tsx}'],
     ignores: tests,
     rules: {
-      'no-restricted-syntax': restrictSyntax('now', 'newDate', 'html'),
+      'no-restricted-syntax': restrictSyntax('now', 'newDate', 'html', 'words'),
       'no-restricted-globals': [
         'error',
         { name: 'fetch', message: 'Requests go through client/src/lib/api-client.ts.' },

@@ -108,6 +108,7 @@ const oneHome = [
     'export const x = <p dangerouslySetInnerHTML={{ __html: "" }} />;',
     'no-restricted-syntax',
   ],
+  ['client/src/features/bids/made-up.tsx', 'export const x = <p>Hand in</p>;', 'no-restricted-syntax'],
   ['client/src/features/bids/made-up.ts', 'export const now = Date.now();', 'no-restricted-syntax'],
 ];
 
@@ -122,6 +123,7 @@ const inItsHome = [
     'const COLUMNS = "id";\nexport const q = (s) => s.query(`SELECT ${COLUMNS}`);',
   ],
   ['client/src/lib/api-client.ts', "export const load = () => fetch('/api/bids');"],
+  ['client/src/components/made-up.tsx', "export const x = <p>Kerfyard {'·'} 4 × 8</p>;"],
 ];
 
 describe('import cycles', () => {
