@@ -7,6 +7,8 @@ import type { CutDetailsProps } from './cut-details.tsx';
 import { CutInput } from './cut-input.tsx';
 import styles from './cut-list.module.css';
 
+const unit = 'ft';
+
 /** What else shapes the panels of a slab: column lines, where a joint always falls, and how long a panel may be. */
 export function JointFields(props: CutDetailsProps) {
   const { line, index, errors, onFigure } = props;
@@ -47,7 +49,7 @@ function BaysInput({
       <label htmlFor={id} className={styles.label}>
         {t(`cuts.fields.${field}`)}
       </label>
-      <span className={formStyles.withUnit} style={{ ['--unit-room' as string]: '2ch' }}>
+      <span className={formStyles.withUnit} style={{ ['--unit-room' as string]: `${unit.length}ch` }}>
         <input
           {...wiringFor(id, { hint: true, error: errors[field], optional: true })}
           name={`cuts.${index}.cut.${field}`}
@@ -60,7 +62,7 @@ function BaysInput({
             change({ type: 'figure', id: line.id, field, value: readBays(event.target.value) });
           }}
         />
-        <span className={formStyles.unit}>ft</span>
+        <span className={formStyles.unit}>{unit}</span>
       </span>
       <FieldNotes id={id} hint={t('cuts.baysHint')} error={errors[field]} />
     </span>
