@@ -72,6 +72,7 @@ export function layOutStitch(run: StitchInput): Omit<StitchHoles, 'working'> {
   return { holes, pitchIn, coreInches: holes * depthIn, cuspIn };
 }
 
+/** The working of a stitch-drilled run, step by step, as the layout was found. */
 export function stitchWorking(
   run: StitchInput,
   layout: Omit<StitchHoles, 'working'>,

@@ -14,6 +14,7 @@ export function step(
   return { label, formula, inputs, value, unit, source };
 }
 
+/** One number put into a step of a working. */
 export const put = (name: string, value: number, unit: string): WorkingInput => ({ name, value, unit });
 
 /** Two sums of the same parts, for the quick and the slow job; one step where they are equal. */

@@ -7,6 +7,7 @@ export const MAX_CENTS = 1_000_000_000;
 /** Basis points: 100 = 1 %. */
 export type BasisPoints = number;
 
+/** Whether a value is whole cents that a number holds exactly. */
 export function isCents(value: unknown): value is Cents {
   return Number.isSafeInteger(value);
 }

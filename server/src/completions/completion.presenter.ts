@@ -20,6 +20,7 @@ export interface CompletionRow {
   photo_ids: string[];
 }
 
+/** What both sides see of a completion; a whitelist. */
 export function presentCompletion(row: CompletionRow, files: ReadonlyMap<string, FileView>): CompletionView {
   return {
     id: row.id,

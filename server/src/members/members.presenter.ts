@@ -35,6 +35,7 @@ export function presentMember(
   };
 }
 
+/** What an owner sees of an invitation; never its token. */
 export function presentInvitation(row: InvitationRow): InvitationView {
   return {
     id: row.id,
@@ -47,6 +48,7 @@ export function presentInvitation(row: InvitationRow): InvitationView {
   };
 }
 
+/** What someone who holds the link sees before taking it up. */
 export function presentOffer(row: InvitationRow): InvitationOfferView {
   return {
     email: row.email,

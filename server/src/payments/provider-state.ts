@@ -34,6 +34,7 @@ export interface ProviderState {
 const sum = (parts: { amount: number; currency: string }[]): number =>
   parts.filter((part) => part.currency === 'usd').reduce((total, part) => total + part.amount, 0);
 
+/** What the provider holds for us, or for a connected account, in US cents. @throws the SDK’s errors */
 export async function readBalance(stripe: StripeClient, account?: string): Promise<ProviderBalance> {
   const balance = await stripe.balance.retrieve({}, account === undefined ? {} : { stripeAccount: account });
   return { pendingCents: sum(balance.pending), availableCents: sum(balance.available) };

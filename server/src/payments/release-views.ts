@@ -14,6 +14,7 @@ export interface ReleaseRow {
   transferred_at: Date | null;
 }
 
+/** What both sides see of a release, in cents. */
 export function presentRelease(row: ReleaseRow): ReleaseView {
   return {
     id: row.id,

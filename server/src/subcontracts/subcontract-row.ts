@@ -65,6 +65,7 @@ export interface Subcontract {
   timeZone: string;
 }
 
+/** "S-1042": the number people say. */
 export function subcontractNumber(number: string | number): string {
   return `S-${number}`;
 }

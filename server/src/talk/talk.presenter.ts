@@ -30,6 +30,7 @@ export interface MessageRow {
   file_ids: string[];
 }
 
+/** A thread as one side sees it, with what that person has not seen yet. */
 export function toThreadView(row: ThreadViewRow): ThreadView {
   const { last_body: body, last_sent_at: sentAt, last_author_name: authorName } = row;
   const hasLast = body !== null && sentAt !== null && authorName !== null;
@@ -44,6 +45,7 @@ export function toThreadView(row: ThreadViewRow): ThreadView {
   };
 }
 
+/** A message as one side sees it. */
 export function toMessageView(row: MessageRow, files: Map<string, FileView>, actor: Actor): MessageView {
   return {
     id: row.id,

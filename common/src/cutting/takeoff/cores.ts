@@ -4,6 +4,7 @@ import { arithmetic, put, type WorkingStep } from '../working.ts';
 import { takeoffOf, weightStep } from './quantities.ts';
 import { cylinderCuFt } from '../weights.ts';
 
+/** Cores: core-inches are depth times count; what comes out is a cylinder each. */
 export function takeoffCore(cut: CoreCut): CutTakeoff {
   const { diameterIn, depthIn, count } = cut;
   const coreInches = depthIn * count;

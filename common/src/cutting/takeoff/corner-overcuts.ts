@@ -49,10 +49,12 @@ export interface CutEnds {
   readonly count: number;
 }
 
+/** Overcut of all cut ends and pieces of the count together, in feet; sizes in inches. */
 export function overcutFeet({ overcutIn, ends, count }: CutEnds): number {
   return (overcutIn * ends * count) / 12;
 }
 
+/** The same with its working, for a person to check. */
 export function overcutFeetStep(cutEnds: CutEnds): WorkingStep {
   return {
     label: 'Overcuts',

@@ -16,6 +16,7 @@ import type {
 import { arithmetic, put, type WorkingInput, type WorkingStep } from '../working.ts';
 import { inchFeetStep, takeoffOf, weightStep } from './quantities.ts';
 
+/** A plain saw line: its length times the count, at its depth. */
 export function takeoffLine(cut: LineCut): CutTakeoff {
   const sawFt = cut.lengthFt * cut.count;
   return takeoffOf(cut, {
@@ -25,6 +26,7 @@ export function takeoffLine(cut: LineCut): CutTakeoff {
   });
 }
 
+/** Contraction joints of a slab, as many and as long as the joint plan finds. */
 export function takeoffJoints(cut: JointsCut): CutTakeoff {
   const plan = jointPlan(cut);
   const sawFt = plan.sawFt * cut.count;
@@ -63,6 +65,7 @@ export function takeoffChase(cut: ChaseCut): CutTakeoff {
   });
 }
 
+/** Block units cut one by one: saw feet are the cut length in inches ÷ 12, times the units. */
 export function takeoffBlock(cut: BlockCut): CutTakeoff {
   const { cutLengthIn, depthIn, count } = cut;
   const sawFt = (cutLengthIn / 12) * count;

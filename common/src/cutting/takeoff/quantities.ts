@@ -53,6 +53,7 @@ export function takeoffOf(cut: Cut, measured: Measured): CutTakeoff {
   };
 }
 
+/** Inch-feet with their working: feet sawn × depth in inches. */
 export function inchFeetStep(sawFt: number, depthIn: number): WorkingStep {
   return {
     label: 'Inch-feet',
@@ -66,6 +67,7 @@ export function inchFeetStep(sawFt: number, depthIn: number): WorkingStep {
 
 const concreteWeightSource = sourceOf(reinforcedConcreteSource);
 
+/** Pounds removed with their working; without a density, reinforced concrete of the source named in it. */
 export function weightStep(cuFt: number, densityPcf: number | undefined): WorkingStep {
   const pcf = densityPcf ?? reinforcedConcretePcf;
   return {
