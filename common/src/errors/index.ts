@@ -57,7 +57,6 @@ export const errorCatalogue = {
     message: 'Money for this line is set aside already, or a payment for it is under way.',
   },
   already_released: { status: 409, message: 'This has been released already.' },
-  payouts_not_ready: { status: 409, message: 'The crew has not finished its payout set-up.' },
   profile_incomplete: {
     status: 409,
     message: 'Something is missing in the company profile before this step.',
