@@ -101,7 +101,7 @@ export default tseslint.config(
       '**/dist/**',
       '**/dist-fakes/**',
       '**/node_modules/**',
-      '.tmp/**',
+      '**/.tmp/**',
       '.data/**',
       'pictures/**',
       'e2e/test-results/**',

@@ -89,6 +89,7 @@ describe('D-06 the order of steps', () => {
 
 describe('a table of moves', () => {
   it('is refused at start when a move leads to a state that is none', () => {
+    // @ts-expect-error -- the type refuses it too; the check at start is for tables that come from elsewhere
     expect(() => defineMachine({ name: 'door', initial: 'shut', moves: { shut: { open: 'ajar' } } })).toThrow(
       'door: unknown state "ajar"',
     );
