@@ -19,9 +19,9 @@ const schemes = ['light', 'dark'];
 /** Where nobody is signed in; nothing leads to some of these. */
 const publicPaths = ['/', '/sign-in', '/sign-up?as=gc', '/sign-up?as=crew', '/verify?token=used', '/no-such-page'];
 /** For everybody signed in; menus lead to some of these, and links do not. */
-const signedInPaths = ['/', '/account', '/calculators'];
-/** Opening it begins a scope, so it is left to people. */
-const leftOut = ['/scopes/new'];
+const signedInPaths = ['/', '/account'];
+/** Opening the first begins a scope, so it is left to people; the others are the same for everybody: see signed-out. */
+const leftOut = /^\/(scopes\/new|calculators)/;
 /** Pages of one kind that differ in what they hold, for owners and staff; one for everybody else. */
 const EXAMPLES = 4;
 
@@ -97,6 +97,7 @@ async function discover(page, role) {
   const limit = /owner|staff/.test(role) ? EXAMPLES : 1;
   const isSignedOut = role === 'signed-out';
   const waiting = isSignedOut ? [...publicPaths] : [...signedInPaths];
+  const isLeftOut = (path) => !isSignedOut && leftOut.test(path);
   const seen = new Map();
   const found = [];
   const known = new Set();
@@ -106,13 +107,13 @@ async function discover(page, role) {
     const { pathname, search } = new URL(page.url());
     const here = pathname + search;
     const example = (seen.get(kindOf(here)) ?? 0) + 1;
-    if (known.has(here) || leftOut.includes(pathname) || (!isSignedOut && example > limit)) continue;
+    if (known.has(here) || isLeftOut(pathname) || (!isSignedOut && example > limit)) continue;
     known.add(here);
     seen.set(kindOf(here), example);
     found.push({ path: here, name: fileName(here, example) });
     await picture(page, { role, name: found.at(-1).name, width: '1280', scheme: 'light' });
     for (const link of await linksOn(page)) {
-      const isWanted = !known.has(link) && !waiting.includes(link) && !leftOut.includes(link);
+      const isWanted = !known.has(link) && !waiting.includes(link) && !isLeftOut(link);
       const count = (seen.get(kindOf(link)) ?? 0) + waiting.filter((other) => kindOf(other) === kindOf(link)).length;
       if (isWanted && count < limit) waiting.push(link);
     }
