@@ -11,5 +11,5 @@ export function verifyToken(signingSecret: string, signUpId: string): string {
     .digest('base64url');
 }
 
-/** What is stored of a token from a mail: its SHA-256, since 128 random bits need no slower hash. */
+/** What is stored of a token from a mail: its SHA-256, since 256 bits that nobody can guess need no slower hash. */
 export const hashToken = (token: string): Buffer => createHash('sha256').update(token).digest();
