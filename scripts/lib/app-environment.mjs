@@ -50,7 +50,6 @@ export function serverEnvironment({
     STRIPE_CONNECT_WEBHOOK_SECRET: secrets.connectWebhookSecret,
     SMTP_URL: `smtp://localhost:${ports.smtp}`,
     MAIL_FROM: 'Kerfyard <no-reply@kerfyard.example>',
-    MAIL_PAGE_URL: mailUrl(ports),
     DEMO_SIGN_INS_FILE: places.signInsFile,
     LOG_LEVEL: process.env.LOG_LEVEL ?? 'info',
     RATE_LIMIT_FACTOR: String(rateLimitFactor),

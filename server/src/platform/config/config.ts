@@ -20,7 +20,6 @@ const environmentSchema = z.object({
   STRIPE_CONNECT_WEBHOOK_SECRET: z.string().startsWith('whsec_'),
   SMTP_URL: z.string().startsWith('smtp'),
   MAIL_FROM: z.string().min(3),
-  MAIL_PAGE_URL: z.url().optional(),
   STRIPE_PAGE_URL: z.url().optional(),
   LOG_LEVEL: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
   RATE_LIMIT_FACTOR: z.coerce.number().min(1).default(1),
@@ -47,7 +46,7 @@ export interface Config {
     connectWebhookSecret: string;
     pageUrl: string | null;
   };
-  mail: { smtpUrl: string; from: string; pageUrl: string | null };
+  mail: { smtpUrl: string; from: string };
   logLevel: 'silent' | 'error' | 'warn' | 'info' | 'debug';
   rateLimitFactor: number;
   /** How many proxies stand before the server; 0 believes no forwarded address. */
@@ -99,7 +98,7 @@ export function readConfig(env: NodeJS.ProcessEnv = process.env): Config {
       connectWebhookSecret: e.STRIPE_CONNECT_WEBHOOK_SECRET,
       pageUrl: e.STRIPE_PAGE_URL ?? null,
     },
-    mail: { smtpUrl: e.SMTP_URL, from: e.MAIL_FROM, pageUrl: e.MAIL_PAGE_URL ?? null },
+    mail: { smtpUrl: e.SMTP_URL, from: e.MAIL_FROM },
     logLevel: e.LOG_LEVEL,
     rateLimitFactor: e.RATE_LIMIT_FACTOR,
     trustProxy: e.TRUST_PROXY,
