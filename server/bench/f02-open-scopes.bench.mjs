@@ -7,8 +7,8 @@ import { openPool } from './lib/scopes.mjs';
 
 const CREW = 'marisol';
 const ROUNDS = 5;
-const LOAD_SECONDS = 3;
-const ALONE = 300;
+const LOAD_SECONDS = 2;
+const ALONE = 200;
 const FILL_LIMIT_SECONDS = 60;
 const SIZES = [1_000, 100_000, 1_000_000];
 
