@@ -1,11 +1,12 @@
 import type { BidListItem } from '@kerfyard/common/bids';
-import { Button, Heading, Text } from '@radix-ui/themes';
+import { Heading, Text } from '@radix-ui/themes';
 import { useInfiniteQuery } from '@tanstack/react-query';
 import { useTranslation } from 'react-i18next';
 import { DueTime } from '../components/countdown.tsx';
 import { CutSketch } from '../components/cut-sketch.tsx';
 import { ButtonLink, TextLink } from '../components/link.tsx';
 import { MoneyText } from '../components/money-text.tsx';
+import { MoreButton } from '../components/more-button.tsx';
 import { Page } from '../components/page.tsx';
 import { EmptyState, Loading, QueryErrorState } from '../components/states.tsx';
 import { StatusWord } from '../components/status-word.tsx';
@@ -47,16 +48,7 @@ export default function BidsPage() {
           </li>
         ))}
       </ul>
-      {list.hasNextPage && (
-        <Button
-          variant="soft"
-          size="3"
-          loading={list.isFetchingNextPage}
-          onClick={() => void list.fetchNextPage()}
-        >
-          {t('list.more')}
-        </Button>
-      )}
+      <MoreButton list={list}>{t('list.more')}</MoreButton>
     </Page>
   );
 }

@@ -1,10 +1,10 @@
-import { Button } from '@radix-ui/themes';
 import { useInfiniteQuery } from '@tanstack/react-query';
 import { useEffect, useRef } from 'react';
 import { useTranslation } from 'react-i18next';
 import { useSearchParams, type LoaderFunctionArgs } from 'react-router-dom';
 import { useAnnounce } from '../components/announcer.tsx';
 import { CutSketch } from '../components/cut-sketch.tsx';
+import { MoreButton } from '../components/more-button.tsx';
 import { Page } from '../components/page.tsx';
 import { EmptyState, Loading, QueryErrorState } from '../components/states.tsx';
 import { openScopesKeys, openScopesQuery } from '../features/open-scopes/api/open-scopes.queries.ts';
@@ -46,16 +46,7 @@ export default function OpenScopesPage() {
           </li>
         ))}
       </ul>
-      {list.hasNextPage && (
-        <Button
-          variant="soft"
-          size="3"
-          loading={list.isFetchingNextPage}
-          onClick={() => void list.fetchNextPage()}
-        >
-          {t('more')}
-        </Button>
-      )}
+      <MoreButton list={list}>{t('more')}</MoreButton>
     </Page>
   );
 }

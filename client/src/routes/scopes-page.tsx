@@ -1,9 +1,9 @@
-import { Button } from '@radix-ui/themes';
 import { useInfiniteQuery } from '@tanstack/react-query';
 import { useTranslation } from 'react-i18next';
 import { useSearchParams, type LoaderFunctionArgs } from 'react-router-dom';
 import { CutSketch } from '../components/cut-sketch.tsx';
 import { ButtonLink } from '../components/link.tsx';
+import { MoreButton } from '../components/more-button.tsx';
 import { Page } from '../components/page.tsx';
 import { EmptyState, Loading, QueryErrorState } from '../components/states.tsx';
 import { ownScopesQuery, scopeKeys } from '../features/scopes/api/scope.queries.ts';
@@ -48,16 +48,7 @@ export default function ScopesPage() {
           </li>
         ))}
       </ul>
-      {list.hasNextPage && (
-        <Button
-          variant="soft"
-          size="3"
-          loading={list.isFetchingNextPage}
-          onClick={() => void list.fetchNextPage()}
-        >
-          {t('more')}
-        </Button>
-      )}
+      <MoreButton list={list}>{t('more')}</MoreButton>
     </Page>
   );
 }

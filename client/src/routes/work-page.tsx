@@ -1,9 +1,10 @@
 import type { SubcontractStatus } from '@kerfyard/common/subcontracts';
-import { Button, Heading, Select } from '@radix-ui/themes';
+import { Heading, Select } from '@radix-ui/themes';
 import { useInfiniteQuery } from '@tanstack/react-query';
 import { useTranslation } from 'react-i18next';
 import { useSearchParams } from 'react-router-dom';
 import { CutSketch } from '../components/cut-sketch.tsx';
+import { MoreButton } from '../components/more-button.tsx';
 import { Page } from '../components/page.tsx';
 import { EmptyState, Loading, QueryErrorState } from '../components/states.tsx';
 import { useSession } from '../features/session/hooks/use-session.ts';
@@ -100,18 +101,9 @@ function Subcontracts() {
           </li>
         ))}
       </ul>
-      {list.hasNextPage && (
-        <div>
-          <Button
-            variant="soft"
-            size="3"
-            loading={list.isFetchingNextPage}
-            onClick={() => void list.fetchNextPage()}
-          >
-            {t('list.more')}
-          </Button>
-        </div>
-      )}
+      <div>
+        <MoreButton list={list}>{t('list.more')}</MoreButton>
+      </div>
     </section>
   );
 }
