@@ -57,7 +57,9 @@ test('a crew finds a scope and bids on it by keyboard alone', async ({ visit }) 
     await keys.type(form.getByLabel('Valid for'), '30');
     await visitor.audit();
     await keys.press(form.getByRole('button', { name: 'Hand in the bid' }));
-    await expect(page.getByRole('button', { name: /^Your price: \$4,850\.00/ })).toBeVisible();
+    const own = page.getByRole('region', { name: 'Your bid' });
+    await expect(own.getByText(/^Handed in /)).toBeVisible();
+    await expect(own.getByRole('definition').filter({ hasText: '$4,850.00' })).toBeVisible();
   });
 
   await test.step('a dialog keeps the focus, and gives it back', async () => {
