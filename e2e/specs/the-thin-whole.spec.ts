@@ -3,6 +3,7 @@ import { DENVER, makeCuttingContractor } from '../../server/test/builders/people
 import { lumpBid, moveDue, placeBid } from '../../server/test/builders/scopes.ts';
 import { mailTo } from '../../server/test/mail.ts';
 import { expectBooksToHold, readLedger, readProvider } from '../fixtures/books.ts';
+import { LiveLine } from '../fixtures/live-line.ts';
 import { tell } from '../fixtures/stack.ts';
 import { expect, test, type Visitor } from '../fixtures/test.ts';
 import { silence } from '../fixtures/watch.ts';
@@ -40,6 +41,7 @@ const rates = { L1: '1.10', T1: '0.95', O1: '1.45', C1: '85' };
 test('a scope travels from sign-up to released money, in two browsers', async ({ visit }) => {
   test.setTimeout(300_000);
   const [gc, crew] = await Promise.all([visit('desk'), visit('phone')]);
+  const lineOfCrew = await LiveLine.through(crew.context);
 
   await test.step('both sign up, and the crew says what it has', async () => {
     await Promise.all([
@@ -113,7 +115,7 @@ test('a scope travels from sign-up to released money, in two browsers', async ({
   });
 
   await test.step('money is set aside while the line of the crew is half-open', async () => {
-    crew.line.silence();
+    lineOfCrew.silence();
     await gc.page.getByRole('link', { name: 'Money', exact: true }).last().click();
     await gc.audit();
     await setAsideByCard(gc);
