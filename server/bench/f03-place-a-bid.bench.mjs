@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import { setTimeout as sleep } from 'node:timers/promises';
 import { Browser } from './lib/browser.mjs';
 import { capture, retell } from './lib/capture.mjs';
 import { ratios, spread } from './lib/figures.mjs';
@@ -10,11 +11,32 @@ const CREW = 'marisol';
 
 const path = (scope) => `/api/scopes/${scope.id}/own-bid`;
 
-/** Bids a second, one after the other. */
+/** The letters that a bid causes are written after it, by jobs: each bid waits until they are. */
+const LETTERS_MS = 60;
+const SAMPLES = 5;
+
+/** Bids a second, one after the other, by the time each itself takes. */
 async function rate(bids) {
-  const start = performance.now();
-  for (const bid of bids) await bid();
-  return (bids.length * 1000) / (performance.now() - start);
+  let spentMs = 0;
+  for (const bid of bids) {
+    const start = performance.now();
+    await bid();
+    spentMs += performance.now() - start;
+    await sleep(LETTERS_MS);
+  }
+  return (bids.length * 1000) / spentMs;
+}
+
+/** What a bid says to the database: the shortest of several, since a job's words may fall among the others'. */
+function hearBids(samples, input) {
+  return capture(CREW, async (browser, record) => {
+    const heard = [];
+    for (const scope of samples) {
+      const { statements } = await record(() => browser.send('PUT', path(scope), input));
+      heard.push({ scope, statements });
+    }
+    return heard.reduce((least, one) => (one.statements.length < least.statements.length ? one : least));
+  });
 }
 
 async function sayAll(pool, statements) {
@@ -34,16 +56,15 @@ async function sayAll(pool, statements) {
  */
 export default async function placeABid() {
   const pool = openPool();
-  const scopes = await cloneScopes(1 + ROUNDS * BIDS * 2, 'sealed');
-  const [sample, ...rest] = scopes;
+  const scopes = await cloneScopes(SAMPLES + ROUNDS * BIDS * 2, 'sealed');
+  const samples = scopes.slice(0, SAMPLES);
+  const rest = scopes.slice(SAMPLES);
   try {
     const browser = await Browser.of(CREW);
-    const { body } = await browser.send('GET', `/api/scopes/${sample.id}`);
-    const input = linesBid(sample.revision, body.cuts, 12_500);
+    const { body } = await browser.send('GET', `/api/scopes/${samples[0].id}`);
+    const input = linesBid(samples[0].revision, body.cuts, 12_500);
     const since = Date.now();
-    const { statements } = await capture(CREW, (tapped, record) =>
-      record(() => tapped.send('PUT', path(sample), input)),
-    );
+    const { scope: sample, statements } = await hearBids(samples, input);
     const inserts = statements.filter(({ text }) => /INSERT INTO sealed_bid/.test(text));
     if (inserts.length !== 1) throw new Error('the bid was not among the statements heard');
     const ours = [];
