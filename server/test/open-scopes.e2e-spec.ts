@@ -179,6 +179,8 @@ describe('the list of open scopes', () => {
     const counter = await startQueryCounter(process.env.TEST_PG_URL ?? '');
     const sequelize = new Sequelize(counter.url, {
       logging: false,
+      // One connection: each new one sends statements of its own, whenever the pool opens it.
+      pool: { max: 1 },
       dialectOptions: { application_name: 'reader' },
     });
     const uow = new UnitOfWork(sequelize);
