@@ -32,11 +32,12 @@ const LOCK = 460_001;
 export async function migrate(ownerUrl: string, log: (line: string) => void): Promise<void> {
   const sequelize = new Sequelize(ownerUrl, { logging: false, pool: { max: 2 } });
   try {
-    await sequelize.query(
-      'CREATE TABLE IF NOT EXISTS schema_migration (name text PRIMARY KEY, applied_at timestamptz NOT NULL DEFAULT now())',
-    );
     await sequelize.transaction(async (lock) => {
       await sequelize.query('SELECT pg_advisory_xact_lock($1)', { bind: [LOCK], transaction: lock });
+      // Under the lock, since two such statements at once collide; on a connection of its own, so that it is there at once.
+      await sequelize.query(
+        'CREATE TABLE IF NOT EXISTS schema_migration (name text PRIMARY KEY, applied_at timestamptz NOT NULL DEFAULT now())',
+      );
       await umzug(sequelize, log).up();
     });
   } finally {
