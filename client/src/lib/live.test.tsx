@@ -76,7 +76,7 @@ function show() {
       <Board load={() => Promise.resolve((loads += 1))} />
     </QueryClientProvider>,
   );
-  return { loads: () => loads, stop, view };
+  return { client, loads: () => loads, stop, view };
 }
 
 const settle = (ms: number) => act(() => vi.advanceTimersByTimeAsync(ms));
@@ -92,6 +92,31 @@ describe('the live line', () => {
     socket.hint({ topic: 'bids', scopeId: 'other', seq: 1 });
     await settle(1000);
     expect(board.loads()).toBe(before + 1);
+    board.stop();
+  });
+
+  it('loses no hint to a page that is left within the wait', async () => {
+    const socket = await opened();
+    const board = show();
+    socket.say('connect');
+    await settle(10);
+    socket.hint({ topic: 'bids', scopeId: 's1', seq: 1 });
+    expect(board.client.getQueryState(['scope', 's1'])?.isInvalidated).toBe(false);
+    board.view.unmount();
+    expect(board.client.getQueryState(['scope', 's1'])?.isInvalidated).toBe(true);
+    board.stop();
+  });
+
+  it('makes what no page shows stale with any hint, and leaves what is not live alone', async () => {
+    const socket = await opened();
+    const board = show();
+    await board.client.prefetchQuery({ queryKey: ['place'], queryFn: () => Promise.resolve(1) });
+    socket.say('connect');
+    await settle(10);
+    board.view.unmount();
+    socket.hint({ topic: 'visits' });
+    expect(board.client.getQueryState(['scope', 's1'])?.isInvalidated).toBe(true);
+    expect(board.client.getQueryState(['place'])?.isInvalidated).toBe(false);
     board.stop();
   });
 

@@ -61,6 +61,8 @@ export function useLiveHints(keys: HintKeys): void {
     return () => {
       stop();
       clearTimeout(timer);
+      // Leaving the page within the wait must not lose what was heard: the next page may show the same query.
+      flush();
     };
   }, [client]);
 }
@@ -75,11 +77,18 @@ function keysOf<Topic extends Hint['topic']>(
 
 /**
  * When the line opens, and after a reconnect or a gap: every live query on the screen once, the latter two spread over
- * two seconds. Returns the stop.
+ * two seconds. With any hint: live queries that no page shows now are stale, since only a shown page knows which hint is
+ * about it. Returns the stop.
  */
 export function refetchAfterGaps(client: QueryClient): () => void {
   let timer: ReturnType<typeof setTimeout> | undefined;
   const stop = line.onEvent((event) => {
+    if (event.kind === 'hint') {
+      void client.invalidateQueries({
+        predicate: (query) => query.meta?.live === true && !query.isActive(),
+        refetchType: 'none',
+      });
+    }
     if (event.kind !== 'refresh') return;
     timer ??= setTimeout(
       () => {
