@@ -40,7 +40,7 @@ export default {
   modulePathIgnorePatterns: ['<rootDir>/dist/', '<rootDir>/dist-fakes/'],
   globalSetup: '<rootDir>/test/global-setup.mjs',
   globalTeardown: '<rootDir>/test/global-teardown.mjs',
-  testTimeout: 20_000,
+  testTimeout: 60_000,
   maxWorkers: 2,
   workerIdleMemoryLimit: '1GB',
 };
